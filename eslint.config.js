@@ -15,7 +15,8 @@ const noApi = {
 };
 const noWeb = {
   group: ['**/apps/web/**', '@angular/*', 'konva', 'konva/*'],
-  message: 'Server and libraries do not know the web app: move what both need to libs/contract or libs/geometry.',
+  message:
+    'Server and libraries do not know the web app: move what both need to libs/contract or libs/geometry.',
 };
 const noOtherLib = (allowed) => ({
   regex: `^@stillstroke/(?!${allowed}/)`,
@@ -56,7 +57,10 @@ export default tseslint.config(
     rules: {
       '@angular-eslint/prefer-on-push-component-change-detection': 'error',
       '@angular-eslint/component-selector': ['error', { type: 'element', prefix: 'st', style: 'kebab-case' }],
-      '@angular-eslint/directive-selector': ['error', { type: 'attribute', prefix: 'st', style: 'camelCase' }],
+      '@angular-eslint/directive-selector': [
+        'error',
+        { type: 'attribute', prefix: 'st', style: 'camelCase' },
+      ],
       '@typescript-eslint/unbound-method': ['error', { ignoreStatic: true }],
       ...wall(noApi, noDeepLib),
       'no-restricted-globals': [
@@ -95,6 +99,9 @@ export default tseslint.config(
   { files: ['libs/db/**/*.ts'], rules: wall(noWeb, noOtherLib('db')) },
   {
     files: ['**/*.spec.ts', 'test/**/*.ts', 'scripts/**/*.ts'],
-    rules: { 'no-console': 'off', 'max-lines': ['error', { max: 600, skipBlankLines: true, skipComments: true }] },
+    rules: {
+      'no-console': 'off',
+      'max-lines': ['error', { max: 600, skipBlankLines: true, skipComments: true }],
+    },
   },
 );

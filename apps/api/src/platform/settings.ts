@@ -1,0 +1,64 @@
+import { resolve } from 'node:path';
+import { z } from 'zod';
+
+const megabyte = 1024 * 1024;
+
+/** Environment variables and their defaults; everything the operator can set is here and in the README. */
+const environmentSchema = z.object({
+  PORT: z.coerce.number().int().min(0).max(65_535).default(4300),
+  STILLSTROKE_HOST: z.string().min(1).default('127.0.0.1'),
+  STILLSTROKE_DATA: z.string().min(1).default('./data'),
+  STILLSTROKE_DEMO: z.enum(['on', 'off']).default('on'),
+  STILLSTROKE_PUBLIC_URL: z.url().optional(),
+  /** Set when a reverse proxy in front ends TLS: cookies become Secure and its address header is trusted. */
+  STILLSTROKE_BEHIND_TLS: z.enum(['on', 'off']).default('off'),
+  STILLSTROKE_MAX_CLIP_MB: z.coerce.number().int().min(1).max(20_480).default(2048),
+  STILLSTROKE_MAX_CLIP_MINUTES: z.coerce.number().min(0.1).max(240).default(20),
+  STILLSTROKE_MAX_PICTURE_SIDE: z.coerce.number().int().min(16).max(8192).default(4096),
+  STILLSTROKE_UNDO_MINUTES: z.coerce.number().min(1).max(43_200).default(60),
+  STILLSTROKE_LOG: z.enum(['silent', 'error', 'warn', 'info', 'debug']).default('warn'),
+});
+
+export interface Settings {
+  readonly port: number;
+  readonly host: string;
+  /** Absolute path of the data folder. */
+  readonly dataFolder: string;
+  readonly demo: boolean;
+  /** Address under which people reach the product, for links in invitations; null = from the request. */
+  readonly publicUrl: string | null;
+  readonly behindTls: boolean;
+  readonly limits: { readonly clipBytes: number; readonly clipMinutes: number; readonly pictureSide: number };
+  readonly undoMinutes: number;
+  readonly logLevel: string;
+}
+
+/** A setting that cannot be used; the message names it and says what it may be. */
+export class BadSettingError extends Error {}
+
+/** Reads the settings once at start. Unknown variables are none of our business; a bad one stops the start. */
+export function readSettings(environment: Record<string, string | undefined>): Settings {
+  const parsed = environmentSchema.safeParse(environment);
+  if (!parsed.success) {
+    const issue = parsed.error.issues[0];
+    throw new BadSettingError(
+      `Setting ${issue?.path.join('.') ?? '?'} cannot be used: ${issue?.message ?? 'bad value'}.`,
+    );
+  }
+  const env = parsed.data;
+  return {
+    port: env.PORT,
+    host: env.STILLSTROKE_HOST,
+    dataFolder: resolve(env.STILLSTROKE_DATA),
+    demo: env.STILLSTROKE_DEMO === 'on',
+    publicUrl: env.STILLSTROKE_PUBLIC_URL ?? null,
+    behindTls: env.STILLSTROKE_BEHIND_TLS === 'on',
+    limits: {
+      clipBytes: env.STILLSTROKE_MAX_CLIP_MB * megabyte,
+      clipMinutes: env.STILLSTROKE_MAX_CLIP_MINUTES,
+      pictureSide: env.STILLSTROKE_MAX_PICTURE_SIDE,
+    },
+    undoMinutes: env.STILLSTROKE_UNDO_MINUTES,
+    logLevel: env.STILLSTROKE_LOG,
+  };
+}

@@ -1,0 +1,9 @@
+import { defineConfig } from 'drizzle-kit';
+
+/** `npx drizzle-kit generate --name what-it-does` writes the next migration from the schema files. */
+export default defineConfig({
+  dialect: 'sqlite',
+  schema: ['./libs/db/schema/club.ts', './libs/db/schema/sign-in.ts', './libs/db/schema/film.ts'],
+  out: './libs/db/migrations',
+  casing: 'snake_case',
+});

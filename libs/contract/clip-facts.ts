@@ -1,0 +1,58 @@
+import { z } from 'zod';
+import { idSchema, instantSchema } from './fields';
+
+export const viewSchema = z.enum([
+  'side-underwater',
+  'front-underwater',
+  'side-above',
+  'front-above',
+  'deck',
+]);
+export type View = z.infer<typeof viewSchema>;
+/** Direction in which the swimmer travels in the picture as shown. */
+export const travelSchema = z.enum(['left', 'right']);
+export type Travel = z.infer<typeof travelSchema>;
+export const strokeKindSchema = z.enum(['full', 'drill']);
+export type StrokeKind = z.infer<typeof strokeKindSchema>;
+/** World seconds per file second: 1 for ordinary film, 0.25 for 240 fps film stored at 60. */
+export const captureRateFactorSchema = z.number().finite().min(0.01).max(10);
+
+/** Pixels of the picture as shown; origin at its outer top-left corner, x right, y down. */
+export const pointSchema = z.strictObject({
+  x: z.number().finite().min(-20_000).max(20_000),
+  y: z.number().finite().min(-20_000).max(20_000),
+});
+export type Point = z.infer<typeof pointSchema>;
+export const plumbSchema = z.strictObject({ top: pointSchema, bottom: pointSchema });
+export type Plumb = z.infer<typeof plumbSchema>;
+
+export const clipStatusSchema = z.enum(['ready', 'converting', 'failed']);
+
+export const clipSchema = z.strictObject({
+  id: idSchema,
+  sessionId: idSchema,
+  athleteId: idSchema,
+  name: z.string().describe('File name it came with'),
+  view: viewSchema,
+  travel: travelSchema,
+  stroke: strokeKindSchema,
+  captureRateFactor: z.number(),
+  plumb: plumbSchema.nullable(),
+  status: clipStatusSchema,
+  width: z.int().describe('Pixels as shown, after rotation and pixel aspect'),
+  height: z.int(),
+  frameCount: z.int(),
+  durationUs: z.int(),
+  frameRate: z.number().nullable().describe('Frames per file second; null when variable'),
+  codec: z.string(),
+  container: z.string(),
+  sizeBytes: z.int(),
+  sha256: z.string(),
+  cutOff: z.boolean().describe('The file ends in the middle; its readable frames are kept'),
+  hasPoster: z.boolean(),
+  markedFrames: z.int(),
+  strokeCount: z.int(),
+  createdAt: instantSchema,
+  deletedAt: instantSchema.nullable(),
+});
+export type Clip = z.infer<typeof clipSchema>;

@@ -1,0 +1,6 @@
+import * as club from './club';
+import * as film from './film';
+import * as signIn from './sign-in';
+
+/** Every table, for the ORM's typed queries and for the migration generator. */
+export const schema = { ...club, ...signIn, ...film };
