@@ -1,3 +1,4 @@
+import { sql } from 'drizzle-orm';
 import {
   blob,
   index,
@@ -27,7 +28,12 @@ export const sessions = sqliteTable(
     /** Set while a deletion can still be undone; purged afterwards. */
     deletedAt: text(),
   },
-  (table) => [index('sessions_athlete_date').on(table.athleteId, table.date)],
+  (table) => [
+    index('sessions_athlete_date').on(table.athleteId, table.date),
+    index('sessions_deleted')
+      .on(table.deletedAt)
+      .where(sql`${table.deletedAt} is not null`),
+  ],
 );
 
 export const clips = sqliteTable(
@@ -64,8 +70,17 @@ export const clips = sqliteTable(
     hasPoster: integer({ mode: 'boolean' }).notNull(),
     createdAt: text().notNull(),
     deletedAt: text(),
+    /** Which version of the formulas its stroke figures were computed with; 0 = not yet. */
+    figuresFormulas: integer().notNull().default(0),
   },
-  (table) => [index('clips_session').on(table.sessionId), index('clips_sha256').on(table.sha256)],
+  (table) => [
+    index('clips_session').on(table.sessionId),
+    index('clips_sha256').on(table.sha256),
+    index('clips_formulas').on(table.figuresFormulas),
+    index('clips_deleted')
+      .on(table.deletedAt)
+      .where(sql`${table.deletedAt} is not null`),
+  ],
 );
 
 /** Presentation times (whole microseconds) and key frames of a clip, as little-endian arrays; read and written whole. */
@@ -119,4 +134,36 @@ export const marks = sqliteTable(
     updatedBy: text(),
   },
   (table) => [primaryKey({ columns: [table.clipId, table.arm, table.frame] })],
+);
+
+/**
+ * What was measured on each stroke, kept so that Compare, Trend and lists need not compute it again. Derived from events,
+ * marks, plumb, travel and capture rate factor, and written in the same transaction as any change of those.
+ */
+export const strokeFigures = sqliteTable(
+  'stroke_figures',
+  {
+    strokeId: text()
+      .notNull()
+      .references(() => strokes.id, { onDelete: 'cascade' }),
+    measure: text({
+      enum: [
+        'verticalAt',
+        'peakDrop',
+        'elbowAtMidPull',
+        'entryAndCatch',
+        'pull',
+        'push',
+        'recovery',
+        'strokeRate',
+      ],
+    }).notNull(),
+    /** In the unit of the measure. */
+    value: real().notNull(),
+    /** Standard uncertainty in the same unit. */
+    uncertainty: real().notNull(),
+    /** Where to look at it. */
+    frame: integer().notNull(),
+  },
+  (table) => [primaryKey({ columns: [table.strokeId, table.measure] })],
 );
