@@ -1,0 +1,47 @@
+import type { FrameMark } from '../arm';
+import type { Measured } from '../measures/measured';
+import { type Outcome, ok, refused } from '../outcome';
+import { armAngleUncertainty, type MarkingContext } from '../uncertainty/arm-uncertainty';
+import { largestOf } from '../uncertainty/largest-of';
+import { normalInterval } from '../uncertainty/elbow-interval';
+import type { FrameTimesUs } from './frame-times';
+import { type PullMarks, pullMarks, type PullMarksReason, readMark } from './pull-marks';
+import type { StrokeEvents } from './stroke';
+
+export type PeakDropReason = PullMarksReason | 'too-few-marks';
+
+/**
+ * Largest elbow drop (degrees, + dropped) over the marked frames from catch to exit. The value is the reading on its
+ * frame; the largest of several readings is on average larger than the largest true one, so the interval sits lower.
+ */
+export function peakDrop(
+  stroke: StrokeEvents,
+  marks: readonly FrameMark[],
+  times: FrameTimesUs,
+  context: MarkingContext,
+): Outcome<Measured, PeakDropReason> {
+  const pull = pullMarks(stroke, marks, times, context);
+  return pull.ok ? peakDropOf(pull.value) : pull;
+}
+
+/** The same of marks already sorted out. */
+export function peakDropOf(pull: PullMarks): Outcome<Measured, PeakDropReason> {
+  const read = pull.marks.flatMap(({ mark }) => {
+    const u = armAngleUncertainty(mark, pull.context);
+    if (!u.ok) return [];
+    const value = readMark(mark, pull.axes).elbowDropDeg;
+    return [{ value, standard: u.value.elbowDropDeg, parts: u.value.parts.elbowDropDeg, frame: mark.frame }];
+  });
+  const [first] = read;
+  if (!first) return refused('too-few-marks');
+  const peak = read.reduce((best, next) => (next.value > best.value ? next : best), first);
+  const largest = largestOf(read);
+  return ok({
+    value: peak.value,
+    uncertainty: peak.standard,
+    interval: normalInterval(peak.value - largest.excess, largest.standard),
+    parts: peak.parts,
+    frame: peak.frame,
+    frames: read.map(({ frame }) => frame),
+  });
+}
