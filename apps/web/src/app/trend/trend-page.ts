@@ -1,8 +1,126 @@
-import { ChangeDetectionStrategy, Component } from '@angular/core';
+import { DatePipe } from '@angular/common';
+import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
+import { MatFormFieldModule } from '@angular/material/form-field';
+import { MatSelectModule } from '@angular/material/select';
+import { Router, RouterLink } from '@angular/router';
+import { getAthlete } from '@stillstroke/contract/athletes';
+import { measureSchema, type Measure } from '@stillstroke/contract/measures';
+import { getTrend } from '@stillstroke/contract/trend';
+import { apiResource } from '../core/api/api';
+import { problemOf } from '../core/api/problem-of';
+import {
+  fixed,
+  formatDifference,
+  formatFigure,
+  formatUncertainty,
+  onScreen,
+} from '../ui/figure/format-figure';
+import { measuresInOrder, measureWords } from '../ui/figure/measure-words';
+import { TrendChart } from './trend-chart';
+import { sayTrend } from './trend-sentence';
 
+const leftOutWords = {
+  'other-view': 'another view',
+  drill: 'drill only',
+  'not-measured': 'not measured',
+} as const;
+
+/** One measure of one athlete over the sessions. */
 @Component({
   selector: 'st-trend-page',
-  template: '<h1>Trend</h1>',
+  imports: [DatePipe, MatFormFieldModule, MatSelectModule, RouterLink, TrendChart],
+  templateUrl: './trend-page.html',
+  styleUrl: './trend-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
-export class TrendPage {}
+export class TrendPage {
+  private readonly router = inject(Router);
+
+  readonly athleteId = input.required<string>();
+  /** From the address; anything that is no measure falls back to the first. */
+  readonly measure = input<string>();
+
+  protected readonly chosen = computed<Measure>(
+    () => measureSchema.safeParse(this.measure()).data ?? 'verticalAt',
+  );
+  protected readonly athlete = apiResource(getAthlete, () => ({ params: { id: this.athleteId() } }));
+  protected readonly trend = apiResource(getTrend, () => ({
+    params: { id: this.athleteId() },
+    query: { measure: this.chosen() },
+  }));
+  protected readonly measures = measuresInOrder.map((measure) => ({
+    measure,
+    name: measureWords[measure].name,
+  }));
+  protected readonly words = computed(() => measureWords[this.chosen()]);
+  protected readonly problem = computed(() => {
+    const error = this.trend.error() ?? this.athlete.error();
+    return error ? problemOf(error) : null;
+  });
+  protected readonly shown = computed(() => (this.trend.hasValue() ? this.trend.value() : null));
+  protected readonly sentence = computed(() => {
+    const trend = this.shown();
+    return trend && sayTrend(trend);
+  });
+  protected readonly measured = computed(
+    () => this.shown()?.arms.some(({ points }) => points.length > 0) ?? false,
+  );
+  protected readonly slopes = computed(() => {
+    const trend = this.shown();
+    return (trend?.arms ?? []).flatMap(({ arm, slope }) =>
+      slope && trend
+        ? [
+            {
+              arm,
+              value: `${this.signed(slope.value)} ${unitWords[trend.unit]} a month`,
+              detail: `${this.signed(slope.low)} to ${this.signed(slope.high)}; robust slope ${this.signed(slope.robust)}`,
+            },
+          ]
+        : [],
+    );
+  });
+  protected readonly detectable = computed(() =>
+    (this.shown()?.arms ?? []).flatMap(({ arm, detectable }) =>
+      detectable === null ? [] : [{ arm, text: formatDifference(detectable, this.shown()?.unit ?? 'deg') }],
+    ),
+  );
+  protected readonly leftOut = computed(() => {
+    const left = this.shown()?.leftOut ?? [];
+    return {
+      count: left.length,
+      why: [...new Set(left.map(({ reason }) => leftOutWords[reason]))].join('; '),
+      left,
+    };
+  });
+  protected readonly rows = computed(() => {
+    const trend = this.shown();
+    return (trend?.arms ?? [])
+      .flatMap(({ points }) => points)
+      .sort((a, b) => b.date.localeCompare(a.date) || a.arm.localeCompare(b.arm))
+      .map((point) => ({
+        ...point,
+        value: formatFigure(point.mean, trend?.unit ?? 'deg', point.uncertainty),
+        spread: formatUncertainty(point.uncertainty, trend?.unit ?? 'deg'),
+      }));
+  });
+
+  protected chooseMeasure(measure: Measure): void {
+    void this.router.navigate([], {
+      queryParams: { measure },
+      queryParamsHandling: 'merge',
+      replaceUrl: true,
+    });
+  }
+
+  protected reload(): void {
+    this.trend.reload();
+    this.athlete.reload();
+  }
+
+  private signed(value: number): string {
+    const shown = onScreen(value, this.shown()?.unit ?? 'deg');
+    return `${shown > 0.05 ? '+' : ''}${fixed(shown, 1)}`;
+  }
+}
+
+const unitWords = { share: 'points', deg: 'degrees', perMinute: 'a minute' } as const;

@@ -1,0 +1,105 @@
+import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import { RouterLink } from '@angular/router';
+import type { Trend, TrendPoint } from '@stillstroke/contract/trend';
+import { scaleLinear, scaleUtc } from 'd3-scale';
+import { line } from 'd3-shape';
+import { formatFigure, formatUncertainty, onScreen } from '../ui/figure/format-figure';
+
+const frame = { left: 56, right: 900, top: 20, bottom: 330 };
+/** From this many sessions on the points are joined; fewer are points only. */
+const sessionsForLine = 4;
+const normal95 = 1.96;
+
+/** One measure over the sessions: both arms with their 95 % whiskers; every point leads to its session's frame on the Desk. */
+@Component({
+  selector: 'st-trend-chart',
+  imports: [RouterLink],
+  templateUrl: './trend-chart.html',
+  styleUrl: './trend-chart.scss',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class TrendChart {
+  readonly trend = input.required<Trend>();
+
+  protected readonly frame = frame;
+  private readonly points = computed(() => this.trend().arms.flatMap(({ points }) => points));
+  private readonly x = computed(() => {
+    const times = this.points().map(timeOf);
+    const [first, last] = [Math.min(...times), Math.max(...times)];
+    // A single date sits in the middle.
+    const pad = first === last ? 86_400_000 : 0;
+    return scaleUtc()
+      .domain([first - pad, last + pad])
+      .range([frame.left + 24, frame.right - 70]);
+  });
+  private readonly y = computed(() => {
+    const unit = this.trend().unit;
+    const ends = this.points().flatMap(({ mean, uncertainty }) =>
+      [mean - normal95 * uncertainty, mean + normal95 * uncertainty].map((end) => onScreen(end, unit)),
+    );
+    return scaleLinear()
+      .domain([Math.min(...ends), Math.max(...ends)])
+      .nice(5)
+      .range([frame.bottom, frame.top]);
+  });
+
+  protected readonly grid = computed(() =>
+    this.y()
+      .ticks(5)
+      .map((value) => ({ y: this.y()(value), text: formatTick(value, this.trend().unit) })),
+  );
+  /** Dates below the axis, as many as fit without touching. */
+  protected readonly dates = computed(() => {
+    const shown: { x: number; text: string }[] = [];
+    for (const date of [...new Set(this.points().map((point) => point.date))].sort()) {
+      const x = this.x()(Date.parse(date));
+      const last = shown.at(-1);
+      if (!last || x - last.x > 62) shown.push({ x, text: sayDate(date) });
+    }
+    return shown;
+  });
+  protected readonly arms = computed(() =>
+    this.trend().arms.map(({ arm, points }) => {
+      const drawn = points.map((point) => this.drawn(point));
+      const path = line<{ x: number; y: number }>()
+        .x(({ x }) => x)
+        .y(({ y }) => y);
+      return { arm, drawn, path: points.length >= sessionsForLine ? path(drawn) : null, last: drawn.at(-1) };
+    }),
+  );
+  protected readonly label = computed(
+    () => `${this.points().length} points over the sessions; the table below lists them`,
+  );
+
+  private drawn(point: TrendPoint) {
+    const unit = this.trend().unit;
+    const y = (value: number) => this.y()(onScreen(value, unit));
+    const spread = normal95 * point.uncertainty;
+    const [place] = point.frames;
+    return {
+      x: this.x()(timeOf(point)),
+      y: y(point.mean),
+      high: y(point.mean + spread),
+      low: y(point.mean - spread),
+      link: place ? ['/clips', place.clipId] : ['/sessions', point.sessionId],
+      query: place ? { frame: place.frame, arm: point.arm } : {},
+      label:
+        `${sayDate(point.date)}, ${point.arm} arm: ${formatFigure(point.mean, unit, point.uncertainty)} ` +
+        `${formatUncertainty(point.uncertainty, unit)} over ${point.count} strokes`,
+    };
+  }
+}
+
+const timeOf = ({ date }: { date: string }) => Date.parse(date);
+
+function sayDate(date: string): string {
+  return new Date(`${date}T12:00:00Z`).toLocaleDateString('en-GB', {
+    day: 'numeric',
+    month: 'short',
+    timeZone: 'UTC',
+  });
+}
+
+function formatTick(value: number, unit: 'share' | 'deg' | 'perMinute'): string {
+  return `${String(value).replace('-', '−')}${unit === 'share' ? ' %' : unit === 'deg' ? '°' : ''}`;
+}

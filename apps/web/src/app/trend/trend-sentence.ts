@@ -1,0 +1,30 @@
+import type { Trend } from '@stillstroke/contract/trend';
+import { formatDifference, unitOf } from '../ui/figure/format-figure';
+import { sayMoved } from '../ui/figure/measure-words';
+
+type ArmTrend = Trend['arms'][number];
+
+/** Right arm first when only it moved; each arm in its own sentence. */
+export function sayTrend(trend: Trend): string {
+  const sentences = [...trend.arms]
+    .sort((a, b) => Number(b.verdict === 'changed') - Number(a.verdict === 'changed'))
+    .map((arm) => sayArm(arm, trend));
+  return sentences.length > 0 ? sentences.join(' ') : 'No session with this measure yet.';
+}
+
+function sayArm(arm: ArmTrend, { measure }: Trend): string {
+  const name = arm.arm === 'left' ? 'Left arm' : 'Right arm';
+  const first = arm.points[0];
+  if (!first) return `${name} not measured.`;
+  if (arm.verdict === 'too-few' || arm.change === null) return `${name} measured in one session so far.`;
+  if (arm.verdict === 'not-more-than-marking') {
+    const amount = formatDifference(arm.change, unitOf[measure]);
+    return `${name} ${amount} from the first session: not more than marking could produce.`;
+  }
+  return `${name} ${sayMoved(measure, arm.change)} since ${monthOf(first.date)}: more than marking could produce.`;
+}
+
+/** `July`, from a calendar date; the time zone must not move it. */
+function monthOf(date: string): string {
+  return new Date(`${date}T12:00:00Z`).toLocaleDateString('en-GB', { month: 'long', timeZone: 'UTC' });
+}

@@ -1,0 +1,31 @@
+import { describe, expect, it } from 'vitest';
+import { formatDifference, formatFigure, formatInterval, formatUncertainty } from './format-figure';
+
+describe('figures on the screen', () => {
+  it('shows as many digits as the uncertainty carries', () => {
+    expect(formatFigure(46.27, 'deg', 1.8)).toBe('46°');
+    expect(formatFigure(46.27, 'deg', 0.4)).toBe('46.3°');
+    expect(formatFigure(0.5812, 'share', 0.04)).toBe('58 %');
+    expect(formatUncertainty(1.8, 'deg')).toBe('± 2°');
+    expect(formatUncertainty(0.4, 'deg')).toBe('± 0.4°');
+  });
+
+  it('never shows an uncertainty of nothing', () => {
+    expect(formatUncertainty(0, 'deg')).toBe('± 0.1°');
+    expect(formatUncertainty(0.0001, 'share')).toBe('± 0.1 %');
+  });
+
+  it('writes signs where they mean something, and a true minus', () => {
+    expect(formatFigure(6.2, 'deg', 1, true)).toBe('+6°');
+    expect(formatFigure(-6.2, 'deg', 1, true)).toBe('−6°');
+    expect(formatFigure(-0.2, 'deg', 1, true)).toBe('0°');
+  });
+
+  it('says differences in points and degrees', () => {
+    expect(formatDifference(0.24, 'share')).toBe('24 points');
+    expect(formatDifference(-0.01, 'share')).toBe('1 point');
+    expect(formatDifference(-15.4, 'deg')).toBe('15°');
+    expect(formatInterval({ low: -0.31, high: -0.17 }, 'share')).toBe('17 to 31');
+    expect(formatInterval({ low: -4.2, high: 6 }, 'deg')).toBe('−4 to 6');
+  });
+});

@@ -1,0 +1,66 @@
+import type { Measure } from '@stillstroke/contract/measures';
+import { formatDifference, unitOf } from './format-figure';
+
+interface MeasureWords {
+  readonly name: string;
+  /** What it is, in a few words under the name. */
+  readonly explains: string;
+  /** Sentence for the arm whose value is larger, without amount: `The right forearm comes to vertical later`. */
+  readonly larger: (arm: 'left' | 'right') => string;
+  /** The same with the amount: `Right later by 24 points`. */
+  readonly largerBy: (arm: 'Left' | 'Right', amount: string) => string;
+  /** A change of one arm over time: `later by 8 points` for larger, its opposite for smaller. */
+  readonly moved: (larger: boolean, amount: string) => string;
+}
+
+const share = (name: string, explains: string, what: string): MeasureWords => ({
+  name,
+  explains,
+  larger: (arm) => `The ${arm} arm takes longer for ${what}`,
+  largerBy: (arm, amount) => `${arm} longer by ${amount}`,
+  moved: (larger, amount) => `${larger ? 'longer' : 'shorter'} by ${amount}`,
+});
+
+/** Names and sentences of every measure, one place for every page. */
+export const measureWords: Readonly<Record<Measure, MeasureWords>> = {
+  verticalAt: {
+    name: 'Vertical at',
+    explains: 'share of the pull, catch to exit',
+    larger: (arm) => `The ${arm} forearm comes to vertical later`,
+    largerBy: (arm, amount) => `${arm} later by ${amount}`,
+    moved: (larger, amount) => `${larger ? 'later' : 'earlier'} by ${amount}`,
+  },
+  peakDrop: {
+    name: 'Largest elbow drop',
+    explains: 'elbow behind the line shoulder to hand',
+    larger: (arm) => `The ${arm} elbow drops more`,
+    largerBy: (arm, amount) => `${arm} drops ${amount} more`,
+    moved: (larger, amount) => `drops ${amount} ${larger ? 'more' : 'less'}`,
+  },
+  elbowAtMidPull: {
+    name: 'Elbow at mid-pull',
+    explains: '180° is a straight arm; projected',
+    larger: (arm) => `The ${arm} arm is straighter at mid-pull`,
+    largerBy: (arm, amount) => `${arm} straighter by ${amount}`,
+    moved: (larger, amount) => `${larger ? 'straighter' : 'more bent'} by ${amount}`,
+  },
+  entryAndCatch: share('Entry and catch', 'share of the cycle', 'entry and catch'),
+  pull: share('Pull', 'share of the cycle, catch to mid-pull', 'the pull'),
+  push: share('Push', 'share of the cycle, mid-pull to exit', 'the push'),
+  recovery: share('Recovery', 'share of the cycle', 'the recovery'),
+  strokeRate: {
+    name: 'Stroke rate',
+    explains: 'cycles a minute; a cycle is two arm strokes',
+    larger: (arm) => `The ${arm} arm turns over quicker`,
+    largerBy: (arm, amount) => `${arm} quicker by ${amount}`,
+    moved: (larger, amount) => `${larger ? 'quicker' : 'slower'} by ${amount}`,
+  },
+};
+
+/** Order in which measures are listed and looked at for the sentence of a page. */
+export const measuresInOrder = Object.keys(measureWords) as readonly Measure[];
+
+/** `later by 8 points`, for a change given in the unit of the measure. */
+export function sayMoved(measure: Measure, change: number): string {
+  return measureWords[measure].moved(change > 0, formatDifference(change, unitOf[measure]));
+}
