@@ -1,10 +1,10 @@
 import { ChangeDetectionStrategy, Component } from '@angular/core';
-import { RouterOutlet } from '@angular/router';
+import { Shell } from './core/shell/shell';
 
 @Component({
   selector: 'st-root',
-  imports: [RouterOutlet],
-  template: '<router-outlet />',
+  imports: [Shell],
+  template: '<st-shell />',
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class App {}
