@@ -1,0 +1,57 @@
+import type { Clip } from '@stillstroke/contract/clip-facts';
+import type { Db } from '@stillstroke/db/open';
+import { clips, marks, sessions, strokes } from '@stillstroke/db/schema/film';
+import { and, asc, eq, inArray, isNull, sql, type SQL } from 'drizzle-orm';
+import { notFound } from '../platform/problem';
+
+export type ClipRow = typeof clips.$inferSelect;
+
+/** Clips of some sessions by session, deleted ones left out, oldest first. */
+export function clipsOfSessions(db: Db, sessionIds: readonly string[]): Map<string, Clip[]> {
+  const bySession = new Map<string, Clip[]>();
+  if (sessionIds.length === 0) return bySession;
+  const found = answersWhere(db, and(inArray(clips.sessionId, [...sessionIds]), isNull(clips.deletedAt)));
+  for (const clip of found) {
+    const listed = bySession.get(clip.sessionId);
+    if (listed) listed.push(clip);
+    else bySession.set(clip.sessionId, [clip]);
+  }
+  return bySession;
+}
+
+/** One clip as the contract describes it; the caller has made sure that it may be seen. */
+export function clipAnswer(db: Db, clipId: string): Clip {
+  const clip = answersWhere(db, eq(clips.id, clipId))[0];
+  if (!clip) throw notFound('clip');
+  return clip;
+}
+
+function answersWhere(db: Db, where: SQL | undefined): Clip[] {
+  return db
+    .select({
+      clip: clips,
+      athleteId: sessions.athleteId,
+      markedFrames: sql<number>`(select count(distinct ${marks.frame}) from ${marks} where ${marks.clipId} = ${clips.id})`,
+      strokeCount: sql<number>`(select count(*) from ${strokes} where ${strokes.clipId} = ${clips.id})`,
+    })
+    .from(clips)
+    .innerJoin(sessions, eq(sessions.id, clips.sessionId))
+    .where(where)
+    .orderBy(asc(clips.createdAt), asc(clips.id))
+    .all()
+    .map(({ clip, ...counted }) => asAnswer(clip, counted));
+}
+
+function asAnswer(row: ClipRow, counted: Pick<Clip, 'athleteId' | 'markedFrames' | 'strokeCount'>): Clip {
+  const { plumbTopX, plumbTopY, plumbBottomX, plumbBottomY, figuresFormulas: _, ...facts } = row;
+  return { ...facts, plumb: plumbOf({ plumbTopX, plumbTopY, plumbBottomX, plumbBottomY }), ...counted };
+}
+
+/** The plumb line of a clip's row; null where none was drawn. */
+export function plumbOf(
+  row: Pick<ClipRow, 'plumbTopX' | 'plumbTopY' | 'plumbBottomX' | 'plumbBottomY'>,
+): Clip['plumb'] {
+  const { plumbTopX, plumbTopY, plumbBottomX, plumbBottomY } = row;
+  if (plumbTopX === null || plumbTopY === null || plumbBottomX === null || plumbBottomY === null) return null;
+  return { top: { x: plumbTopX, y: plumbTopY }, bottom: { x: plumbBottomX, y: plumbBottomY } };
+}

@@ -1,0 +1,131 @@
+import type { SignedInUser } from '@stillstroke/contract/auth';
+import type { BodyOf, ParamsOf, QueryOf } from '@stillstroke/contract/endpoint';
+import type { deleteMark as deleteCall, Mark, putMark as putCall } from '@stillstroke/contract/marks';
+import type { Db } from '@stillstroke/db/open';
+import { marks } from '@stillstroke/db/schema/film';
+import { armAngles } from '@stillstroke/geometry/angles/arm-angles';
+import { checkArmMark } from '@stillstroke/geometry/arm';
+import { and, asc, eq } from 'drizzle-orm';
+import type { ClipRow } from '../clips/clip-answer';
+import { refreshFiguresAt } from '../measures/figures';
+import type { AppContext } from '../platform/context';
+import { changedMeanwhile, HttpProblem, notFound } from '../platform/problem';
+import { liveClip } from '../sessions/live-film';
+import { markAnswer } from './mark-answer';
+
+type Context = Pick<AppContext, 'db' | 'now'>;
+type Place = Pick<ParamsOf<typeof putCall>, 'arm' | 'frame'>;
+
+/** All marks of a clip, by frame. */
+export function listMarks({ db }: Context, user: SignedInUser, clipId: string): Mark[] {
+  const { clip } = liveClip(db, user, clipId);
+  return db
+    .select()
+    .from(marks)
+    .where(eq(marks.clipId, clip.id))
+    .orderBy(asc(marks.frame), asc(marks.arm))
+    .all()
+    .map((row) => markAnswer(row, clip));
+}
+
+/**
+ * Sets the mark of one arm on one frame. Sent twice it is the same mark, of the same version; with a version, it is
+ * refused when that is not the newest (0: when there is one already) and the mark there is not what is sent.
+ */
+export function putMark(
+  { db, now }: Context,
+  user: SignedInUser,
+  { id: clipId, ...place }: ParamsOf<typeof putCall>,
+  { version, ...joints }: BodyOf<typeof putCall>,
+): Mark {
+  const { clip } = liveClip(db, user, clipId);
+  checkFrame(clip, place.frame);
+  checkJoints(joints, clip);
+  const fields = columns(joints);
+  return db.transaction(
+    (tx) => {
+      const there = markAt(tx, clip.id, place);
+      if (there && isSame(there, fields)) return markAnswer(there, clip);
+      if (version !== undefined && version !== (there?.version ?? 0))
+        throw changedMeanwhile('mark', there ? markAnswer(there, clip) : null);
+      const changed = { ...fields, updatedAt: now().toISOString(), updatedBy: user.id };
+      const row = tx
+        .insert(marks)
+        .values({ clipId: clip.id, ...place, ...changed })
+        .onConflictDoUpdate({
+          target: [marks.clipId, marks.arm, marks.frame],
+          set: { ...changed, version: (there?.version ?? 0) + 1 },
+        })
+        .returning()
+        .get();
+      refreshFiguresAt(tx, clip.id, place.arm, place.frame);
+      return markAnswer(row, clip);
+    },
+    { behavior: 'immediate' },
+  );
+}
+
+/** Takes a mark away; with a version, only when that is the newest. */
+export function deleteMark(
+  { db }: Context,
+  user: SignedInUser,
+  { id: clipId, ...place }: ParamsOf<typeof deleteCall>,
+  { version }: QueryOf<typeof deleteCall>,
+): void {
+  const { clip } = liveClip(db, user, clipId);
+  db.transaction(
+    (tx) => {
+      const there = markAt(tx, clip.id, place);
+      if (!there) throw notFound('mark');
+      if (version !== undefined && version !== there.version)
+        throw changedMeanwhile('mark', markAnswer(there, clip));
+      tx.delete(marks).where(at(clip.id, place)).run();
+      refreshFiguresAt(tx, clip.id, place.arm, place.frame);
+    },
+    { behavior: 'immediate' },
+  );
+}
+
+const at = (clipId: string, { arm, frame }: Place) =>
+  and(eq(marks.clipId, clipId), eq(marks.arm, arm), eq(marks.frame, frame));
+
+function markAt(db: Pick<Db, 'select'>, clipId: string, place: Place) {
+  return db.select().from(marks).where(at(clipId, place)).get();
+}
+
+function checkFrame({ frameCount }: ClipRow, frame: number): void {
+  if (frame < frameCount) return;
+  throw new HttpProblem(
+    422,
+    'frame-out-of-range',
+    `The clip has frames 0 to ${frameCount - 1}; there is no frame ${frame}.`,
+  );
+}
+
+type Joints = Omit<BodyOf<typeof putCall>, 'version'>;
+
+/** Refuses a mark of which no angle can be read, now or with another plumb. */
+function checkJoints(joints: Joints, { travel }: ClipRow): void {
+  const readable = checkArmMark(joints).ok && armAngles(joints, { travel, plumb: null }).ok;
+  if (readable) return;
+  throw new HttpProblem(
+    422,
+    'joints-coincide',
+    'Two of the three joints lie on one point, so the arm has no direction. Move them apart.',
+  );
+}
+
+function columns({ shoulder, elbow, wrist }: Joints) {
+  return {
+    shoulderX: shoulder.x,
+    shoulderY: shoulder.y,
+    elbowX: elbow.x,
+    elbowY: elbow.y,
+    wristX: wrist.x,
+    wristY: wrist.y,
+  };
+}
+
+function isSame(there: typeof marks.$inferSelect, fields: ReturnType<typeof columns>): boolean {
+  return (Object.keys(fields) as (keyof typeof fields)[]).every((key) => there[key] === fields[key]);
+}

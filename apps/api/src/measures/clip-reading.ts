@@ -1,0 +1,100 @@
+import { clipFrames, clips, marks, strokes } from '@stillstroke/db/schema/film';
+import type { Db } from '@stillstroke/db/open';
+import type { FrameMark } from '@stillstroke/geometry/arm';
+import type { StrokeEvents } from '@stillstroke/geometry/events/stroke';
+import type { ReadingContext } from '@stillstroke/geometry/measures/reading-context';
+import { strokeMeasures, type StrokeMeasures } from '@stillstroke/geometry/measures/stroke-measures';
+import { defaultJointUncertaintyPx } from '@stillstroke/geometry/uncertainty/joint-uncertainty';
+import { and, asc, eq } from 'drizzle-orm';
+import { plumbOf, type ClipRow } from '../clips/clip-answer';
+import { frameTimes } from '../media/frame-blobs';
+
+export type StrokeRow = typeof strokes.$inferSelect;
+export type MarkRow = typeof marks.$inferSelect;
+type Arm = StrokeRow['arm'];
+
+/** A database or a transaction in it. */
+export type Reader = Pick<Db, 'select'>;
+
+/** What the readings of a clip depend on beside marks, events and frame times. */
+export function readingContext(clip: ClipRow): ReadingContext {
+  return {
+    plumb: plumbOf(clip),
+    travel: clip.travel,
+    jointUncertaintyPx: defaultJointUncertaintyPx(clip),
+    captureRateFactor: clip.captureRateFactor,
+  };
+}
+
+export function strokeEvents(row: StrokeRow): StrokeEvents {
+  return {
+    entry: row.entryFrame,
+    catch: row.catchFrame,
+    exit: row.exitFrame,
+    nextEntry: row.nextEntryFrame,
+  };
+}
+
+export function frameMark(row: MarkRow): FrameMark {
+  return {
+    frame: row.frame,
+    shoulder: { x: row.shoulderX, y: row.shoulderY },
+    elbow: { x: row.elbowX, y: row.elbowY },
+    wrist: { x: row.wristX, y: row.wristY },
+  };
+}
+
+/** Frame times of a clip in whole microseconds. */
+export function clipTimes(db: Reader, clipId: string): number[] {
+  const blob = db
+    .select({ times: clipFrames.timestampsUs })
+    .from(clipFrames)
+    .where(eq(clipFrames.clipId, clipId))
+    .get();
+  return blob ? Array.from(frameTimes(blob.times)) : [];
+}
+
+export interface MeasuredStroke {
+  readonly stroke: StrokeRow;
+  readonly measures: StrokeMeasures;
+  /** Of the clip's frames, whole microseconds. */
+  readonly times: readonly number[];
+}
+
+/** Measures the strokes of a clip, by arm and entry. `wanted` leaves strokes out before anything is computed. */
+export function measureStrokes(
+  db: Reader,
+  clip: ClipRow,
+  wanted: (stroke: StrokeRow) => boolean = () => true,
+): MeasuredStroke[] {
+  const found = db
+    .select()
+    .from(strokes)
+    .where(eq(strokes.clipId, clip.id))
+    .orderBy(asc(strokes.arm), asc(strokes.entryFrame))
+    .all()
+    .filter(wanted);
+  if (found.length === 0) return [];
+  const times = clipTimes(db, clip.id);
+  const context = readingContext(clip);
+  const ofArm = { left: armMarks(db, clip.id, 'left'), right: armMarks(db, clip.id, 'right') };
+  return found.map((stroke) => ({
+    stroke,
+    times,
+    measures: strokeMeasures(strokeEvents(stroke), ofArm[stroke.arm], times, context),
+  }));
+}
+
+function armMarks(db: Reader, clipId: string, arm: Arm): FrameMark[] {
+  return db
+    .select()
+    .from(marks)
+    .where(and(eq(marks.clipId, clipId), eq(marks.arm, arm)))
+    .orderBy(asc(marks.frame))
+    .all()
+    .map(frameMark);
+}
+
+export function clipRow(db: Reader, clipId: string): ClipRow | undefined {
+  return db.select().from(clips).where(eq(clips.id, clipId)).get();
+}

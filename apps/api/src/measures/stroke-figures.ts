@@ -1,0 +1,109 @@
+import type { Figure, Measure, StrokeMeasures as StrokeAnswer } from '@stillstroke/contract/measures';
+import { eventTimeUncertaintyUs, type FrameTimesUs } from '@stillstroke/geometry/events/frame-times';
+import type { Phase } from '@stillstroke/geometry/events/phases';
+import type { StrokeEvents } from '@stillstroke/geometry/events/stroke';
+import type { Measured } from '@stillstroke/geometry/measures/measured';
+import type { StrokeMeasures } from '@stillstroke/geometry/measures/stroke-measures';
+import type { Outcome } from '@stillstroke/geometry/outcome';
+
+/** The figures of a stroke as the contract names them, from what the geometry library measured. */
+export function figuresOf(
+  events: StrokeEvents,
+  measures: StrokeMeasures,
+  times: FrameTimesUs,
+): Pick<
+  StrokeAnswer,
+  'phases' | 'verticalAtShare' | 'peakElbowDrop' | 'elbowAtMidPull' | 'midPull' | 'strokeRate'
+> {
+  return {
+    phases: {
+      entryAndCatch: phaseFigure(measures, 'entryAndCatch'),
+      pull: phaseFigure(measures, 'pull'),
+      push: phaseFigure(measures, 'push'),
+      recovery: phaseFigure(measures, 'recovery'),
+    },
+    verticalAtShare: measuredFigure(measures.verticalAt),
+    peakElbowDrop: measuredFigure(measures.peakDrop),
+    elbowAtMidPull: measuredFigure(measures.elbowAtMidPull),
+    midPull: midPullFigure(events, measures, times),
+    strokeRate: strokeRateFigure(events, measures),
+  };
+}
+
+/** The same by the names under which Compare and Trend know them. */
+export function figuresByMeasure(
+  events: StrokeEvents,
+  measures: StrokeMeasures,
+  times: FrameTimesUs,
+): Readonly<Record<Measure, Figure>> {
+  const { phases, verticalAtShare, peakElbowDrop, elbowAtMidPull, strokeRate } = figuresOf(
+    events,
+    measures,
+    times,
+  );
+  return { ...phases, verticalAt: verticalAtShare, peakDrop: peakElbowDrop, elbowAtMidPull, strokeRate };
+}
+
+const none = (reason: string): Figure => ({
+  value: null,
+  uncertainty: null,
+  reason,
+  frame: null,
+  frames: [],
+});
+
+function measuredFigure(outcome: Outcome<Measured>): Figure {
+  if (!outcome.ok) return none(outcome.reason);
+  const { value, uncertainty, frame, frames } = outcome.value;
+  return { value, uncertainty, reason: null, frame, frames: [...frames] };
+}
+
+function phaseFigure(
+  { phases, midPull }: StrokeMeasures,
+  name: 'entryAndCatch' | 'pull' | 'push' | 'recovery',
+) {
+  if (!phases.ok) return none(phases.reason);
+  const phase: Phase | null = phases.value[name];
+  if (phase) {
+    const [first, last] = phase.frames;
+    return {
+      value: phase.share,
+      uncertainty: phase.uncertainty,
+      reason: null,
+      frame: first,
+      frames: [first, last],
+    };
+  }
+  return none(midPull.ok ? 'mid-pull-outside-pull' : midPull.reason);
+}
+
+/**
+ * Share of the pull at which the hand passes under the shoulder: s = (m − c)/(e − c) of mid-pull, catch and exit. With
+ * L = e − c, u(s)² = (u_m² + (1 − s)²·u_c² + s²·u_e²)/L² (JCGM 100:2008, eq. (10)).
+ */
+function midPullFigure(events: StrokeEvents, { midPull }: StrokeMeasures, times: FrameTimesUs): Figure {
+  if (!midPull.ok) return none(midPull.reason);
+  const { share, frame, frames, uncertaintyUs } = midPull.value;
+  const lengthUs = (times[events.exit] ?? 0) - (times[events.catch] ?? 0);
+  const uncertainty =
+    Math.hypot(
+      uncertaintyUs,
+      (1 - share) * eventTimeUncertaintyUs(times, events.catch),
+      share * eventTimeUncertaintyUs(times, events.exit),
+    ) / lengthUs;
+  return { value: share, uncertainty, reason: null, frame, frames: [events.catch, ...frames, events.exit] };
+}
+
+/** Cycles a minute of world time, f = 60/T; u(f) = f·u(T)/T. */
+function strokeRateFigure({ entry, nextEntry }: StrokeEvents, { phases }: StrokeMeasures): Figure {
+  if (!phases.ok) return none(phases.reason);
+  const { cycleS, cycleUncertaintyS } = phases.value;
+  const value = 60 / cycleS;
+  return {
+    value,
+    uncertainty: (value * cycleUncertaintyS) / cycleS,
+    reason: null,
+    frame: entry,
+    frames: nextEntry === null ? [entry] : [entry, nextEntry],
+  };
+}
