@@ -1,6 +1,7 @@
 import type { ErrorRequestHandler } from 'express';
 import type { Logger } from 'pino';
 import { HttpProblem } from './problem';
+import { routeOf } from './request-log';
 
 /** Statuses that body parsers and the router put on their errors, with words of ours. */
 const parserWords: Record<number, string> = {
@@ -22,7 +23,7 @@ export function errorHandler(log: Logger): ErrorRequestHandler {
     const problem = asProblem(error);
     if (problem.status >= 500)
       log.error(
-        { method: req.method, path: req.route as unknown, name: nameOf(error), stack: stackOf(error) },
+        { method: req.method, route: routeOf(req), name: nameOf(error), stack: stackOf(error) },
         'request failed',
       );
     res.status(problem.status).type('application/problem+json').send(JSON.stringify(problem.toJson()));

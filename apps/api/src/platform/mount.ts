@@ -63,6 +63,9 @@ function parts<P extends z.ZodType, Q extends z.ZodType, B extends z.ZodType>(
   endpoint: Endpoint<P, Q, B>,
   req: Request,
 ): { params: z.output<P>; query: z.output<Q>; body: z.output<B> } {
+  if (endpoint.bodyKind !== 'multipart' && req.is('multipart/form-data')) {
+    throw new HttpProblem(415, 'bad-request', 'Send the body as application/json.');
+  }
   // An id that cannot be one names nothing: 404, as for any id that does not exist.
   const params = endpoint.params?.safeParse(req.params);
   if (params?.success === false) throw notFound('page');
