@@ -2,8 +2,7 @@ import type { FrameMark } from '../arm';
 import type { Measured } from '../measures/measured';
 import { type Outcome, ok, refused } from '../outcome';
 import { armAngleUncertainty, type MarkingContext } from '../uncertainty/arm-uncertainty';
-import { largestOf } from '../uncertainty/largest-of';
-import { normalInterval } from '../uncertainty/elbow-interval';
+import { largestInterval } from '../uncertainty/largest-of';
 import type { FrameTimesUs } from './frame-times';
 import { type PullMarks, pullMarks, type PullMarksReason, readMark } from './pull-marks';
 import type { StrokeEvents } from './stroke';
@@ -32,14 +31,13 @@ export function peakDropOf(pull: PullMarks): Outcome<Measured, PeakDropReason> {
     const value = readMark(mark, pull.axes).elbowDropDeg;
     return [{ value, standard: u.value.elbowDropDeg, parts: u.value.parts.elbowDropDeg, frame: mark.frame }];
   });
-  const [first] = read;
+  const [first, ...others] = read;
   if (!first) return refused('too-few-marks');
   const peak = read.reduce((best, next) => (next.value > best.value ? next : best), first);
-  const largest = largestOf(read);
   return ok({
     value: peak.value,
     uncertainty: peak.standard,
-    interval: normalInterval(peak.value - largest.excess, largest.standard),
+    interval: largestInterval([first, ...others]),
     parts: peak.parts,
     frame: peak.frame,
     frames: read.map(({ frame }) => frame),

@@ -33,7 +33,7 @@ function straightEnd(observed: number): Interval {
 }
 
 const FAR_FROM_FOLD = 6;
-const HALVINGS = 50;
+const HALVINGS = 32;
 
 /** Smallest true bend whose acceptance region still holds the observed one. */
 function lowerEnd(observed: number): number {

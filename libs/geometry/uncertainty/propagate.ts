@@ -21,8 +21,12 @@ export function propagate(
   const values = inputs.map((input) => input.value);
   const contributions = inputs.map(({ source, standard }, at) => {
     if (standard === 0) return { source, alone: 0 };
-    const moved = (by: number): number => result(values.map((value, i) => (i === at ? value + by : value)));
-    const rise = moved(STEP * standard) - moved(-STEP * standard);
+    const value = values[at] ?? 0;
+    values[at] = value + STEP * standard;
+    const above = result(values);
+    values[at] = value - STEP * standard;
+    const rise = above - result(values);
+    values[at] = value;
     return { source, alone: Math.abs(rise) / (2 * STEP) };
   });
   return combine(contributions);

@@ -1,0 +1,66 @@
+import { type Outcome, ok, refused } from '../outcome';
+import type { Interval } from '../uncertainty/elbow-interval';
+import { studentBelow, t95 } from './distributions';
+import { effectiveFreedom } from './effective-freedom';
+import { type SampleReason, type SampleSummary, summarise } from './sample';
+
+/** Difference of two independent means, unequal variances allowed. */
+export interface MeanDifference {
+  /** Mean of the first minus mean of the second. */
+  readonly difference: number;
+  /** Standard error of the difference. */
+  readonly standard: number;
+  readonly t: number;
+  /** Welch–Satterthwaite. */
+  readonly degreesOfFreedom: number;
+  /** Two-sided. */
+  readonly p: number;
+  /** 95 % interval. */
+  readonly interval: Interval;
+}
+
+export type WelchReason = SampleReason | 'too-few-values' | 'no-spread';
+
+/**
+ * Welch's t test. `common` is a standard uncertainty of the difference that does not shrink with more values; it joins
+ * the standard error with infinite degrees of freedom (JCGM 100:2008, G.4.1).
+ */
+export function welch(
+  first: readonly number[],
+  second: readonly number[],
+  common = 0,
+): Outcome<MeanDifference, WelchReason> {
+  const one = summarise(first);
+  if (!one.ok) return one;
+  const two = summarise(second);
+  if (!two.ok) return two;
+  return welchOf(one.value, two.value, common);
+}
+
+/** The same of two samples already summarised. */
+export function welchOf(
+  one: SampleSummary,
+  two: SampleSummary,
+  common = 0,
+): Outcome<MeanDifference, 'too-few-values' | 'no-spread'> {
+  if (one.sd === null || two.sd === null) return refused('too-few-values');
+  const parts = [
+    { standard: one.sd / Math.sqrt(one.count), degreesOfFreedom: one.count - 1 },
+    { standard: two.sd / Math.sqrt(two.count), degreesOfFreedom: two.count - 1 },
+    { standard: common, degreesOfFreedom: Infinity },
+  ];
+  if (one.sd === 0 && two.sd === 0) return refused('no-spread');
+  const degreesOfFreedom = effectiveFreedom(parts);
+  const standard = Math.hypot(...parts.map((part) => part.standard));
+  const difference = one.mean - two.mean;
+  const t = difference / standard;
+  const half = t95(degreesOfFreedom) * standard;
+  return ok({
+    difference,
+    standard,
+    t,
+    degreesOfFreedom,
+    p: 2 * studentBelow(-Math.abs(t), degreesOfFreedom),
+    interval: { low: difference - half, high: difference + half },
+  });
+}
