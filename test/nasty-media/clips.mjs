@@ -337,6 +337,22 @@ export const clips = [
   },
   {
     ...base,
+    file: 'corrupt-noise.mp4',
+    note: 'noise from the middle of the packet of a picture that nothing refers to',
+    damaged: [14],
+    encode: x264(plain),
+    patch: patch.scramblePacket(14, 0.3),
+  },
+  {
+    ...base,
+    file: 'corrupt-vp9.webm',
+    note: 'VP9 with a packet overwritten with noise; the rest of its group refers to it',
+    damaged: Array.from({ length: 14 }, (_, n) => 34 + n),
+    encode: ['-c:v', 'libvpx-vp9', '-b:v', '150k', '-g', '24', '-auto-alt-ref', '0', '-lag-in-frames', '0'],
+    patch: patch.scrambleBlock(34),
+  },
+  {
+    ...base,
     pictures: 12,
     file: 'hevc.mp4',
     note: 'a codec that the browser does not decode',

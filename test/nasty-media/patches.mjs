@@ -91,6 +91,50 @@ export const overwritePacket = (shown, value) => (bytes) => {
   return damaged;
 };
 
+/** Fills the packet of the n-th shown picture with noise from a share of its length on. */
+export const scramblePacket = (shown, from) => (bytes) => {
+  const boxes = parseBoxes(bytes);
+  const range = sampleRanges(boxes)[decodePosition(boxes, shown)];
+  const damaged = Buffer.from(bytes);
+  noise(damaged.subarray(range.offset + Math.ceil(range.size * from), range.offset + range.size));
+  return damaged;
+};
+
+/** Fills the n-th simple block of a Matroska file with noise, behind its own header. */
+export const scrambleBlock = (nth) => (bytes) => {
+  const damaged = Buffer.from(bytes);
+  let at = bytes.indexOf(CLUSTER_ID);
+  for (let block = -1; ;) {
+    at = bytes.indexOf(0xa3, at + 1);
+    const { length, width } = vint(bytes, at + 1);
+    const body = at + 1 + width;
+    // Track 1, in a byte of its own, tells a block from picture data that happens to look like one.
+    if (bytes[body] !== 0x81 || length < 8 || body + length > bytes.length) continue;
+    block += 1;
+    if (block === nth) {
+      noise(damaged.subarray(body + 4, body + length));
+      return damaged;
+    }
+    at = body + length - 1;
+  }
+};
+
+/** The length field of an EBML element. */
+function vint(bytes, at) {
+  const width = Math.clz32(bytes[at]) - 23;
+  let length = bytes[at] & (0xff >> width);
+  for (let n = 1; n < width; n += 1) length = length * 256 + bytes[at + n];
+  return { length, width };
+}
+
+function noise(bytes) {
+  let seed = 11;
+  for (let at = 0; at < bytes.length; at += 1) {
+    seed = (Math.imul(seed, 1664525) + 1013904223) >>> 0;
+    bytes[at] = seed >>> 24;
+  }
+}
+
 function sampleTicks(boxes) {
   return boxAt(boxes, 'moov/trak/mdia/minf/stbl/stts').body.readUInt32BE(12);
 }

@@ -58,8 +58,8 @@ export interface FrameSourceStats {
   readonly cachedFrames: number;
   readonly cachedBytes: number;
   readonly budgetBytes: number;
-  /** Frames on their way between decoder, cache and page. */
-  readonly transientFrames: number;
+  /** Pictures that are open in the worker, counted apart from the cache; more than `cachedFrames` would be a leak. */
+  readonly openInWorker: number;
   /** Frames handed out by `frame()` and not closed yet. */
   readonly lentFrames: number;
   /** Bytes read from the network since opening. */
