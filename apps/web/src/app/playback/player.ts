@@ -1,4 +1,5 @@
 import type { FrameAnswer, FrameSource } from './frame-source';
+import { Pace } from './pace';
 
 /** Time and frames of the display, so that tests can turn them by hand. */
 export interface PlayerClock {
@@ -31,10 +32,8 @@ export interface PlayerEvents {
   stopped(reason: 'end' | 'stop' | 'fault'): void;
 }
 
-/** Frames later than this, in milliseconds, are late to the eye. */
-const LATE_MS = 100;
-/** Back on time when no later than this. */
-const ON_TIME_MS = 25;
+/** A frame later than this, in milliseconds, moves the time of all that follow. */
+const SLIP_MS = 25;
 
 /**
  * Plays every frame of a clip in order, forward or back, at the clip's own times. When decoding cannot keep up it plays
@@ -86,7 +85,9 @@ class PlayRun {
   private frame: number;
   private dueAt: number;
   private handle: number | null = null;
-  private late = false;
+  private due: FrameAnswer | null = null;
+  private readonly pace = new Pace();
+  private behind = false;
   private over = false;
 
   constructor(
@@ -110,7 +111,9 @@ class PlayRun {
       this.end('end');
       return;
     }
-    this.dueAt += Math.abs(time - own) / 1000 / this.order.speed;
+    const planned = Math.abs(time - own) / 1000 / this.order.speed;
+    this.dueAt += planned;
+    this.pace.plan(planned);
     this.frame = coming;
     void this.source.frame(coming, { signal: this.abort.signal }).then((answer) => {
       if (this.over) closeImage(answer);
@@ -124,12 +127,10 @@ class PlayRun {
     this.abort.abort();
     if (this.handle !== null) this.clock.cancel(this.handle);
     this.forget();
-    this.tellLate(false);
+    this.tellBehind(false);
     this.done();
     this.events.stopped(reason);
   }
-
-  private due: FrameAnswer | null = null;
 
   private showWhenDue(answer: FrameAnswer): void {
     this.due = answer;
@@ -151,18 +152,17 @@ class PlayRun {
     else this.end('fault');
   }
 
-  /** A frame that came late moves the time of all that follow: catching up would mean leaving frames out. */
+  /** Catching up would mean leaving frames out, so time that was lost stays lost. */
   private measureLateness(): void {
-    const lateness = this.clock.now() - this.dueAt;
-    if (lateness > LATE_MS) this.tellLate(true);
-    else if (lateness <= ON_TIME_MS) this.tellLate(false);
-    if (lateness > ON_TIME_MS) this.dueAt = this.clock.now();
+    const now = this.clock.now();
+    if (now - this.dueAt > SLIP_MS) this.dueAt = now;
+    this.tellBehind(this.pace.isBehind(now, this.behind));
   }
 
-  private tellLate(late: boolean): void {
-    if (late === this.late) return;
-    this.late = late;
-    this.events.behind(late);
+  private tellBehind(behind: boolean): void {
+    if (behind === this.behind) return;
+    this.behind = behind;
+    this.events.behind(behind);
   }
 
   private forget(): void {
