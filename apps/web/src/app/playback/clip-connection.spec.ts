@@ -1,6 +1,6 @@
 import type { ClipIndex } from '@stillstroke/clip-index/frame-index';
 import { describe, expect, it } from 'vitest';
-import { ClipConnection, type WorkerPort } from './clip-connection';
+import { ClipConnection } from './clip-connection';
 import type { ToPage, ToWorker } from './protocol';
 
 /** A worker whose answers are given by hand. */
@@ -42,7 +42,7 @@ const index = { timestampsUs: [0, 33333, 66667], keyFrames: [0] } as ClipIndex;
 
 async function connected() {
   const worker = new HandWorker();
-  const opening = ClipConnection.open(worker as unknown as WorkerPort, { mediaUrl: '/m', budgetBytes: 1 });
+  const opening = ClipConnection.open(worker, { mediaUrl: '/m', budgetBytes: 1 });
   worker.answer({ kind: 'opened', id: 0, index });
   return { worker, clip: await opening };
 }
@@ -111,7 +111,7 @@ describe('ClipConnection', () => {
 
   it('throws the refusal of a clip with its code', async () => {
     const worker = new HandWorker();
-    const opening = ClipConnection.open(worker as unknown as WorkerPort, { mediaUrl: '/m', budgetBytes: 1 });
+    const opening = ClipConnection.open(worker, { mediaUrl: '/m', budgetBytes: 1 });
     worker.answer({ kind: 'refused', id: 0, code: 'network', message: 'gone' });
     await expect(opening).rejects.toMatchObject({ code: 'network', message: 'gone' });
     expect(worker.terminated).toBe(true);
