@@ -116,16 +116,9 @@ test('an index that differs from the server’s is refused', async ({ page }) =>
 });
 
 test('without WebCodecs, or on an insecure page, opening says why', async ({ page }) => {
-  const code = (prepare: () => void) =>
-    page.evaluate(
-      async ([source, url]) => {
-        new Function(`(${source})()`)();
-        return window.corpus.refusal(url);
-      },
-      [prepare.toString(), KEYS] as const,
-    );
-  expect(await code(() => Reflect.deleteProperty(globalThis, 'VideoDecoder'))).toBe('no-webcodecs');
-  expect(await code(() => Object.defineProperty(globalThis, 'isSecureContext', { value: false }))).toBe(
-    'insecure-context',
-  );
+  const code = () => page.evaluate((url) => window.corpus.refusal(url), KEYS);
+  await page.evaluate(() => Reflect.deleteProperty(globalThis, 'VideoDecoder'));
+  expect(await code()).toBe('no-webcodecs');
+  await page.evaluate(() => Object.defineProperty(globalThis, 'isSecureContext', { value: false }));
+  expect(await code()).toBe('insecure-context');
 });
