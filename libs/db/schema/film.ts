@@ -162,6 +162,8 @@ export const strokeFigures = sqliteTable(
     value: real().notNull(),
     /** Standard uncertainty in the same unit. */
     uncertainty: real().notNull(),
+    /** The part of it that all strokes of a clip share (camera roll), which more strokes do not lessen. */
+    setUp: real().notNull().default(0),
     /** Where to look at it. */
     frame: integer().notNull(),
   },

@@ -1,0 +1,1 @@
+ALTER TABLE `stroke_figures` ADD `set_up` real DEFAULT 0 NOT NULL;
