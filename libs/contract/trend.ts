@@ -4,7 +4,14 @@ import { dateSchema, frameSchema, idParams, idSchema } from './fields';
 import { measureSchema, unitSchema } from './measures';
 import { armSchema } from './strokes';
 
-export const changeVerdictSchema = z.enum(['changed', 'not-more-than-marking', 'too-few']);
+/** `not-more-than-strokes-vary`: more than marking could produce, yet within what the strokes of a session differ among themselves. */
+export const changeVerdictSchema = z.enum([
+  'changed',
+  'not-more-than-marking',
+  'not-more-than-strokes-vary',
+  'too-few',
+]);
+export type ChangeVerdict = z.infer<typeof changeVerdictSchema>;
 
 /** One arm in one session: the mean of its strokes, its standard uncertainty, and where to look. */
 export const trendPointSchema = z.strictObject({

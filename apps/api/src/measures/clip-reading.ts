@@ -61,12 +61,8 @@ export interface MeasuredStroke {
   readonly times: readonly number[];
 }
 
-/** Measures the strokes of a clip, by arm and entry. `wanted` leaves strokes out before anything is computed. */
-export function measureStrokes(
-  db: Reader,
-  clip: ClipRow,
-  wanted: (stroke: StrokeRow) => boolean = () => true,
-): MeasuredStroke[] {
+/** Strokes of a clip, by arm and entry, with the marks, times and context to read them. */
+export function readStrokes(db: Reader, clip: ClipRow, wanted: (stroke: StrokeRow) => boolean = () => true) {
   const found = db
     .select()
     .from(strokes)
@@ -74,10 +70,22 @@ export function measureStrokes(
     .orderBy(asc(strokes.arm), asc(strokes.entryFrame))
     .all()
     .filter(wanted);
-  if (found.length === 0) return [];
-  const times = clipTimes(db, clip.id);
-  const context = readingContext(clip);
-  const ofArm = { left: armMarks(db, clip.id, 'left'), right: armMarks(db, clip.id, 'right') };
+  const marksOf = (arm: Arm) => (found.length === 0 ? [] : armMarks(db, clip.id, arm));
+  return {
+    strokes: found,
+    marks: { left: marksOf('left'), right: marksOf('right') },
+    times: found.length === 0 ? [] : clipTimes(db, clip.id),
+    context: readingContext(clip),
+  };
+}
+
+/** Measures the strokes of a clip, by arm and entry. `wanted` leaves strokes out before anything is computed. */
+export function measureStrokes(
+  db: Reader,
+  clip: ClipRow,
+  wanted?: (stroke: StrokeRow) => boolean,
+): MeasuredStroke[] {
+  const { strokes: found, marks: ofArm, times, context } = readStrokes(db, clip, wanted);
   return found.map((stroke) => ({
     stroke,
     times,

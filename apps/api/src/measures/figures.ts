@@ -4,7 +4,7 @@ import { clips, strokeFigures } from '@stillstroke/db/schema/film';
 import { eq, inArray, ne } from 'drizzle-orm';
 import type { AppContext } from '../platform/context';
 import { clipRow, measureStrokes, strokeEvents, type StrokeRow } from './clip-reading';
-import { figuresByMeasure } from './stroke-figures';
+import { figuresByMeasure, setUpPart } from './stroke-figures';
 
 /** Count this up when a formula behind a figure changes: figures kept from before are then computed again at start. */
 export const FORMULAS = 1;
@@ -43,7 +43,8 @@ function refresh(tx: Writer, clipId: string, wanted: (stroke: StrokeRow) => bool
     return measureSchema.options.flatMap((measure) => {
       const { value, uncertainty, frame } = figures[measure];
       if (value === null || uncertainty === null || frame === null) return [];
-      return [{ strokeId: stroke.id, measure, value, uncertainty, frame }];
+      const setUp = Math.min(uncertainty, setUpPart(measures, measure));
+      return [{ strokeId: stroke.id, measure, value, uncertainty, setUp, frame }];
     });
   });
   // A clip can have thousands of strokes, a statement only so many parameters.

@@ -44,6 +44,27 @@ export function figuresByMeasure(
   return { ...phases, verticalAt: verticalAtShare, peakDrop: peakElbowDrop, elbowAtMidPull, strokeRate };
 }
 
+/**
+ * The part of a measure's standard uncertainty that every stroke of the clip shares: the camera's roll. Zero where it
+ * cancels, as in angles between two segments, and in shares of time.
+ */
+export function setUpPart(measures: StrokeMeasures, measure: Measure): number {
+  const outcome = sharing(measures, measure);
+  if (!outcome?.ok) return 0;
+  return outcome.value.parts.find(({ source }) => source === 'roll')?.alone ?? 0;
+}
+
+function sharing(measures: StrokeMeasures, measure: Measure): Outcome<Measured> | null {
+  switch (measure) {
+    case 'verticalAt':
+    case 'peakDrop':
+    case 'elbowAtMidPull':
+      return measures[measure];
+    default:
+      return null;
+  }
+}
+
 const none = (reason: string): Figure => ({
   value: null,
   uncertainty: null,

@@ -40,6 +40,18 @@ describe('the sentence of a trend', () => {
     );
   });
 
+  it('claims no change where the strokes of one session differ as much', () => {
+    const left = arm('left', { change: 0.05, verdict: 'not-more-than-strokes-vary' });
+    expect(sayTrend(trend([left]))).toBe(
+      'Left arm 5 points from the first session: not more than strokes of one session differ among themselves.',
+    );
+  });
+
+  it('says when two sessions hold too few strokes', () => {
+    const left = arm('left', { change: 0.05, verdict: 'too-few' });
+    expect(sayTrend(trend([left]))).toBe('Left arm measured on too few strokes to say whether it moved.');
+  });
+
   it('has a word for each direction of each measure', () => {
     expect(sayTrend(trend([arm('right', { change: 7 })], 'peakDrop'))).toContain('drops 7° more');
     expect(sayTrend(trend([arm('right', { change: -7 })], 'peakDrop'))).toContain('drops 7° less');

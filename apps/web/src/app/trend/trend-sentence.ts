@@ -16,13 +16,19 @@ function sayArm(arm: ArmTrend, { measure }: Trend): string {
   const name = arm.arm === 'left' ? 'Left arm' : 'Right arm';
   const first = arm.points[0];
   if (!first) return `${name} not measured.`;
-  if (arm.verdict === 'too-few' || arm.change === null) return `${name} measured in one session so far.`;
-  if (arm.verdict === 'not-more-than-marking') {
+  if (arm.change === null) return `${name} measured in one session so far.`;
+  if (arm.verdict === 'too-few') return `${name} measured on too few strokes to say whether it moved.`;
+  if (arm.verdict !== 'changed') {
     const amount = formatDifference(arm.change, unitOf[measure]);
-    return `${name} ${amount} from the first session: not more than marking could produce.`;
+    return `${name} ${amount} from the first session: ${notMoreThan[arm.verdict]}.`;
   }
   return `${name} ${sayMoved(measure, arm.change)} since ${monthOf(first.date)}: more than marking could produce.`;
 }
+
+const notMoreThan = {
+  'not-more-than-marking': 'not more than marking could produce',
+  'not-more-than-strokes-vary': 'not more than strokes of one session differ among themselves',
+};
 
 /** `July`, from a calendar date; the time zone must not move it. */
 function monthOf(date: string): string {
