@@ -1,0 +1,69 @@
+import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import { RouterLink } from '@angular/router';
+import type { MeasureComparison } from '@stillstroke/contract/comparison';
+import { formatFigure, onScreen } from '../ui/figure/format-figure';
+import { measureWords } from '../ui/figure/measure-words';
+import { ArmRail, type RailValue } from '../ui/rail/arm-rail';
+import { sayVerdict } from './comparison-sentence';
+
+const suffixes = { share: ' %', deg: '°', perMinute: '' } as const;
+
+/** One row a measure: its name, left and right on a rail, and the verdict in words with its strokes behind it. */
+@Component({
+  selector: 'st-measure-rows',
+  imports: [ArmRail, RouterLink],
+  templateUrl: './measure-rows.html',
+  styleUrl: './measure-rows.scss',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class MeasureRows {
+  readonly rows = input.required<readonly MeasureComparison[]>();
+
+  protected readonly shown = computed(() =>
+    this.rows().map((row) => {
+      const [left, right] = [railValue(row, 'left'), railValue(row, 'right')];
+      return {
+        row,
+        words: measureWords[row.measure],
+        left,
+        right,
+        domain: domainOf([left, right], row.unit === 'deg' ? 20 : 10),
+        suffix: suffixes[row.unit],
+        said: sayVerdict(row),
+        settled: row.verdict === 'left-larger' || row.verdict === 'right-larger',
+        label: `${measureWords[row.measure].name}: left ${sayMean(row, 'left')}, right ${sayMean(row, 'right')}`,
+        samples: (['left', 'right'] as const).flatMap((arm) =>
+          row[arm].samples.map((sample) => ({ arm, ...sample })),
+        ),
+      };
+    }),
+  );
+
+  protected readonly format = formatFigure;
+}
+
+function railValue(row: MeasureComparison, arm: 'left' | 'right'): RailValue | null {
+  const { mean, interval } = row[arm];
+  if (mean === null) return null;
+  const shown = interval && {
+    low: onScreen(interval.low, row.unit),
+    high: onScreen(interval.high, row.unit),
+  };
+  return { value: onScreen(mean, row.unit), interval: shown };
+}
+
+/** Both ends of the rail, rounded outwards to the step, with room around what is drawn. */
+function domainOf(values: readonly (RailValue | null)[], step: number): readonly [number, number] {
+  const ends = values.flatMap((value) =>
+    value ? [value.value, value.interval?.low ?? value.value, value.interval?.high ?? value.value] : [],
+  );
+  if (ends.length === 0) return [0, step * 2];
+  const low = Math.floor(Math.min(...ends) / step) * step;
+  const high = Math.ceil(Math.max(...ends) / step) * step;
+  return low === high ? [low - step, high + step] : [low, high + (((high - low) / step) % 2) * step];
+}
+
+function sayMean(row: MeasureComparison, arm: 'left' | 'right'): string {
+  const { mean, count } = row[arm];
+  return mean === null ? 'not measured' : `${formatFigure(mean, row.unit)} over ${count} strokes`;
+}
