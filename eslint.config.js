@@ -96,7 +96,20 @@ export default tseslint.config(
   },
   { files: ['libs/geometry/**/*.ts'], rules: wall(noWeb, noOtherLib('geometry')) },
   { files: ['libs/clip-index/**/*.ts'], rules: wall(noWeb, noOtherLib('clip-index')) },
-  { files: ['libs/contract/**/*.ts'], rules: wall(noWeb, noOtherLib('contract')) },
+  {
+    files: ['libs/contract/**/*.ts'],
+    rules: {
+      ...wall(noWeb, noOtherLib('contract')),
+      'no-restricted-syntax': [
+        'error',
+        {
+          selector: "ImportDeclaration[source.value='zod'] > ImportSpecifier",
+          message:
+            "Write import * as z from 'zod': the named object brings every language of zod into the first page.",
+        },
+      ],
+    },
+  },
   { files: ['libs/db/**/*.ts'], rules: wall(noWeb, noOtherLib('db')) },
   {
     files: ['**/*.spec.ts', 'test/**/*.ts', 'scripts/**/*.ts'],

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 import { endpoint } from './endpoint';
 import { dateSchema, idParams, idSchema, nameSchema, pageOf, pageQuery } from './fields';
 

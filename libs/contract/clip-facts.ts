@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 import { idSchema, instantSchema } from './fields';
 
 export const viewSchema = z.enum([

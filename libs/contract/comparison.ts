@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 import { endpoint, type AnswerOf } from './endpoint';
 import { frameSchema, idParams, idSchema } from './fields';
 import { curvePointSchema, measureSchema, unitSchema } from './measures';

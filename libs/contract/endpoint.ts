@@ -1,4 +1,4 @@
-import type { z } from 'zod';
+import type * as z from 'zod';
 import type { Role } from './roles';
 
 /** Who may call an endpoint at all; what of it a caller may see is decided by the service behind it. */

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 
 /** Field schemas that several resources share: identifiers, names, dates, frames, pages of a list. */
 

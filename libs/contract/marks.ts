@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 import { pointSchema } from './clip-facts';
 import { endpoint } from './endpoint';
 import { frameSchema, idParams, idSchema, instantSchema } from './fields';

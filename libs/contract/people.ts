@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 import { endpoint } from './endpoint';
 import { emailSchema, idParams, idSchema, instantSchema, nameSchema, pageOf, pageQuery } from './fields';
 import { roleSchema } from './roles';

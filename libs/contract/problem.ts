@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 
 /** Stable codes of refusals; the client switches on these, never on the words. */
 export const problemCodes = [

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 import { clipSchema } from './clip-facts';
 import { endpoint } from './endpoint';
 import { dateSchema, idParams, idSchema, instantSchema, noteSchema, pageOf, pageQuery } from './fields';

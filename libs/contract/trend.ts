@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 import { endpoint, type AnswerOf } from './endpoint';
 import { dateSchema, frameSchema, idParams, idSchema } from './fields';
 import { measureSchema, unitSchema } from './measures';

@@ -1,7 +1,7 @@
 import type { Endpoint } from '@stillstroke/contract/endpoint';
 import type { SignedInUser } from '@stillstroke/contract/auth';
 import type { Request, Response, Router } from 'express';
-import type { z } from 'zod';
+import type * as z from 'zod';
 import { forbidden, HttpProblem, notFound, notSignedIn } from './problem';
 
 /** A request whose parts have been checked against the endpoint's schemas; handlers see nothing unchecked. */
