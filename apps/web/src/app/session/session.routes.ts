@@ -1,5 +1,4 @@
 import type { Routes } from '@angular/router';
 import { SessionPage } from './session-page';
-import { uploadsFinished } from './uploads-finished';
 
-export default [{ path: '', component: SessionPage, canDeactivate: [uploadsFinished] }] satisfies Routes;
+export default [{ path: '', component: SessionPage }] satisfies Routes;

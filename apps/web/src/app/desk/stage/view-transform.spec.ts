@@ -20,12 +20,10 @@ import {
 } from './view-transform';
 
 const side = fc.integer({ min: 16, max: 4096 });
-const frames = fc
-  .record({ pw: side, ph: side, sw: side, sh: side })
-  .map(({ pw, ph, sw, sh }): ViewFrame => ({
-    picture: { width: pw, height: ph },
-    stage: { width: sw, height: sh },
-  }));
+const frames = fc.record({ pw: side, ph: side, sw: side, sh: side }).map(({ pw, ph, sw, sh }): ViewFrame => ({
+  picture: { width: pw, height: ph },
+  stage: { width: sw, height: sh },
+}));
 const share = fc.double({ min: 0, max: 1, noNaN: true });
 const factor = fc.double({ min: 0.2, max: 5, noNaN: true });
 /** A view reached from fit by a few zooms and pans, as a person would. */

@@ -37,7 +37,7 @@ export const draggingJoint: ToolBehaviour<DraggingJoint> = {
   release(state, pointer, port): ToolState {
     if (pointer.id !== state.pointer.id) return state;
     const last = draggingJoint.move(state, pointer, port);
-    if (last.name === 'dragging-joint' && last.moved) port.commitJoint();
+    if (last.name === 'dragging-joint' && last.moved) port.commitJoint(state.handle);
     port.inspect(null, null);
     return restingState(port);
   },

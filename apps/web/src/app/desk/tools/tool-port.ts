@@ -51,7 +51,7 @@ export interface ToolPort {
   /** Shows the joint elsewhere, not yet saved. */
   previewJoint(handle: JointHandle, point: PicturePoint): void;
   /** Makes what was previewed one undo step. */
-  commitJoint(): void;
+  commitJoint(handle: JointHandle): void;
   /** Shows the joint where it was before the drag. */
   dropPreview(): void;
   previewPlumb(plumb: PlumbLine | null): void;
