@@ -31,8 +31,10 @@ async function firstDecodable(track: InputVideoTrack, timesUs: readonly number[]
   let failure: unknown = new Error('no frame at any of the times');
   for (const timeUs of timesUs) {
     try {
+      // The time is rounded to microseconds: a hair before the frame, the one before it would be shown.
+      const seconds = (timeUs + 1) / 1e6;
       // A decoder that has given up once is not asked again.
-      const sample = await new VideoSampleSink(track).getSample(timeUs / 1e6);
+      const sample = await new VideoSampleSink(track).getSample(seconds);
       if (sample !== null) return sample;
     } catch (error) {
       failure = error;
@@ -53,7 +55,7 @@ async function pixelsOf(sample: VideoSample) {
 
 /** Pixels come as stored; the container says by how much (degrees clockwise) and whether mirrored they are shown. */
 function upright(picture: Picture, clockwise: number, mirrored: boolean): Picture {
-  if (clockwise !== 0) picture.rotate({ deg: -clockwise, mode: false });
+  if (clockwise !== 0) picture.rotate({ deg: -clockwise, mode: true });
   if (mirrored) picture.flip({ horizontal: true, vertical: false });
   return picture;
 }
