@@ -13,7 +13,12 @@ export class SetUpCommands {
   /** True while a press on the picture draws the plumb. */
   readonly drawingPlumb = this.draws.asReadonly();
 
-  constructor(private readonly core: DeskCore) {}
+  /** View, travel, stroke kind and capture rate as they are now. */
+  readonly facts: DeskCore['film']['facts'];
+
+  constructor(private readonly core: DeskCore) {
+    this.facts = core.film.facts;
+  }
 
   startPlumb(): void {
     if (!this.core.canEdit) return;

@@ -1,0 +1,147 @@
+import { provideHttpClient } from '@angular/common/http';
+import { HttpTestingController, provideHttpClientTesting } from '@angular/common/http/testing';
+import { TestBed } from '@angular/core/testing';
+import type { Mark } from '@stillstroke/contract/marks';
+import { beforeEach, describe, expect, it } from 'vitest';
+import { Api } from '../../core/api/api';
+import { markWith, testClip, testStrokes } from '../state/testing';
+import type { PendingChange, Wanted } from './pending-change';
+import { ChangeSender } from './send-change';
+
+const mine = markWith('left', 7, { upperArmDeg: 60, forearmDeg: 20 });
+const theirs = markWith('left', 7, { upperArmDeg: 60, forearmDeg: 50 });
+const wantedMark: Wanted = { kind: 'mark', arm: 'left', frame: 7, mark: mine };
+const markUrl = `/api/clips/${testClip.id}/marks/left/7`;
+
+const pending = (wanted: Wanted, base: number): PendingChange => ({
+  id: 'x',
+  owner: 'o',
+  order: 1,
+  thing: 't',
+  wanted,
+  base,
+  tried: true,
+});
+
+const saved = (mark: typeof mine, version: number): Mark => ({
+  arm: 'left',
+  frame: 7,
+  shoulder: mark.shoulder ?? { x: 0, y: 0 },
+  elbow: mark.elbow ?? { x: 0, y: 0 },
+  wrist: mark.wrist ?? { x: 0, y: 0 },
+  angles: { forearmDeg: 20, upperArmDeg: 60, elbowDeg: 140, elbowDropDeg: 0 },
+  uncertaintyDeg: { forearmDeg: 1, upperArmDeg: 1, elbowDeg: 1, elbowDropDeg: 1 },
+  plumbAssumed: false,
+  version,
+  updatedAt: '2026-05-04T09:00:00.000Z',
+});
+
+const problem = (status: number, code: string, current?: unknown) => ({
+  type: 'about:blank',
+  title: code,
+  status,
+  detail: 'Say what to do.',
+  code,
+  ...(current !== undefined && { current }),
+});
+
+describe('ChangeSender', () => {
+  let http: HttpTestingController;
+  let sender: ChangeSender;
+
+  beforeEach(() => {
+    TestBed.configureTestingModule({ providers: [provideHttpClient(), provideHttpClientTesting()] });
+    http = TestBed.inject(HttpTestingController);
+    sender = new ChangeSender(TestBed.inject(Api), testClip.id);
+  });
+
+  it('puts a mark with the version it was made on, and answers the new one', async () => {
+    const result = sender.send(pending(wantedMark, 3));
+    const request = http.expectOne({ method: 'PUT', url: markUrl });
+    expect(request.request.body).toEqual({
+      shoulder: mine.shoulder,
+      elbow: mine.elbow,
+      wrist: mine.wrist,
+      version: 3,
+    });
+    request.flush(saved(mine, 4));
+    expect(await result).toEqual({ kind: 'done', version: 4 });
+  });
+
+  it('shows what somebody else made of it meanwhile', async () => {
+    const result = sender.send(pending(wantedMark, 3));
+    const refusal = problem(409, 'changed-meanwhile', saved(theirs, 5));
+    http.expectOne(markUrl).flush(refusal, { status: 409, statusText: 'Conflict' });
+    expect(await result).toMatchObject({
+      kind: 'conflict',
+      theirs: { version: 5, wanted: { mark: theirs } },
+    });
+  });
+
+  it('takes its own change coming back for an acknowledgement that was lost', async () => {
+    const stroke = testStrokes[0];
+    if (!stroke) throw new Error('no stroke');
+    const result = sender.send(pending({ kind: 'stroke', id: stroke.id, stroke }, 1));
+    const current = { ...stroke, clipId: testClip.id, version: 2 };
+    const request = http.expectOne({ method: 'PATCH', url: `/api/strokes/${stroke.id}` });
+    request.flush(problem(409, 'changed-meanwhile', current), { status: 409, statusText: 'Conflict' });
+    expect(await result).toEqual({ kind: 'done', version: 2 });
+  });
+
+  it('creates a stroke the server does not have under the id chosen here', () => {
+    const stroke = testStrokes[1];
+    if (!stroke) throw new Error('no stroke');
+    void sender.send(pending({ kind: 'stroke', id: stroke.id, stroke }, 0));
+    const request = http.expectOne({ method: 'POST', url: `/api/clips/${testClip.id}/strokes` });
+    expect(request.request.body).toMatchObject({ id: stroke.id, arm: 'right', entry: 50, nextEntry: 130 });
+  });
+
+  it('calls a mark that is gone already taken away', async () => {
+    const result = sender.send(pending({ ...wantedMark, mark: null }, 3));
+    http
+      .expectOne({ method: 'DELETE', url: `${markUrl}?version=3` })
+      .flush(problem(404, 'not-found'), { status: 404, statusText: 'Not Found' });
+    await Promise.resolve();
+    (await nextRequest(http, `/api/clips/${testClip.id}/marks`)).flush({ items: [], nextCursor: null });
+    expect(await result).toEqual({ kind: 'done', version: 0 });
+  });
+
+  it('tells a clip that is gone from a thing that is gone', async () => {
+    const result = sender.send(pending(wantedMark, 0));
+    http.expectOne(markUrl).flush(problem(404, 'not-found'), { status: 404, statusText: 'Not Found' });
+    (await nextRequest(http, `/api/clips/${testClip.id}/marks`)).flush(problem(404, 'not-found'), {
+      status: 404,
+      statusText: 'Not Found',
+    });
+    expect(await result).toEqual({ kind: 'stopped', why: 'gone' });
+  });
+
+  for (const [status, code, expected] of [
+    [401, 'not-signed-in', { kind: 'stopped', why: 'signed-out' }],
+    [403, 'forbidden', { kind: 'stopped', why: 'forbidden' }],
+    [422, 'joints-coincide', { kind: 'refused', words: 'Say what to do.' }],
+    [503, 'internal', { kind: 'later' }],
+    [429, 'too-many-attempts', { kind: 'later' }],
+  ] as const) {
+    it(`answers ${expected.kind} to ${status}`, async () => {
+      const result = sender.send(pending(wantedMark, 0));
+      http.expectOne(markUrl).flush(problem(status, code), { status, statusText: code });
+      expect(await result).toEqual(expected);
+    });
+  }
+
+  it('sends again later when the line breaks', async () => {
+    const result = sender.send(pending(wantedMark, 0));
+    http.expectOne(markUrl).error(new ProgressEvent('error'), { status: 0 });
+    expect(await result).toEqual({ kind: 'later' });
+  });
+});
+
+async function nextRequest(http: HttpTestingController, url: string) {
+  for (let i = 0; i < 50; i += 1) {
+    const [found] = http.match(url);
+    if (found) return found;
+    await new Promise((resolve) => setTimeout(resolve, 0));
+  }
+  throw new Error(`nobody asked for ${url}`);
+}
