@@ -7,7 +7,7 @@
  * it to the system's temporary folder instead: for looking at. Needs Debian's chromium and ffmpeg; neither is needed to
  * run or test the product.
  */
-import { writeFileSync } from 'node:fs';
+import { copyFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
@@ -64,13 +64,13 @@ function writeTruth(film: Film): void {
 
 async function shoot(studio: Studio, film: Film, dots: boolean): Promise<void> {
   const { width, height } = film.camera;
-  const target = join(dots ? tmpdir() : FOLDERS[film.folder], `${film.name}.mp4`);
+  const making = join(tmpdir(), `${film.name}.mp4`);
   const encoder = openEncoder({
     width,
     height,
     framesPerSecond: film.framesPerSecond,
     quality: film.quality,
-    target,
+    target: making,
   });
   const truth = dots ? truthOf(film) : null;
   const frames = Array.from({ length: film.frames }, (_, frame) => frame);
@@ -81,5 +81,10 @@ async function shoot(studio: Studio, film: Film, dots: boolean): Promise<void> {
     await encoder.take(pixels);
   });
   await encoder.finish();
+  const target = dots ? making : join(FOLDERS[film.folder], `${film.name}.mp4`);
+  if (!dots) {
+    copyFileSync(making, target);
+    rmSync(making);
+  }
   console.log(`${target}: ${film.frames} frames`);
 }
