@@ -1,5 +1,6 @@
 import Database from 'better-sqlite3';
 import { drizzle, type BetterSQLite3Database } from 'drizzle-orm/better-sqlite3';
+import { fold } from './folded';
 import { schema } from './schema/all';
 
 export type Db = BetterSQLite3Database<typeof schema>;
@@ -21,6 +22,7 @@ export function openDatabase(path: string): OpenDatabase {
   sqlite.pragma('synchronous = FULL');
   sqlite.pragma('busy_timeout = 5000');
   sqlite.pragma('foreign_keys = ON');
+  sqlite.function('fold', { deterministic: true }, (text) => (typeof text === 'string' ? fold(text) : null));
   const db = drizzle(sqlite, { schema, casing: 'snake_case' });
   return { db, sqlite, close: () => sqlite.close() };
 }

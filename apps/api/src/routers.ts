@@ -1,10 +1,14 @@
 import type { Router } from 'express';
+import { athletesRoutes } from './athletes/athletes.routes';
 import { clipsRoutes } from './clips/clips.routes';
 import { comparisonRoutes } from './comparison/comparison.routes';
+import { invitationsRoutes } from './invitations/invitations.routes';
 import { marksRoutes } from './marks/marks.routes';
 import { measuresRoutes } from './measures/measures.routes';
+import { peopleRoutes } from './people/people.routes';
 import type { AppContext } from './platform/context';
 import { sessionsRoutes } from './sessions/sessions.routes';
+import { squadsRoutes } from './squads/squads.routes';
 import { strokesRoutes } from './strokes/strokes.routes';
 import { trendRoutes } from './trend/trend.routes';
 
@@ -12,6 +16,10 @@ export type RouterFactory = (context: AppContext) => Router;
 
 /** The router of every resource, in no particular order: their paths do not overlap. */
 export const routers: readonly RouterFactory[] = [
+  peopleRoutes,
+  invitationsRoutes,
+  squadsRoutes,
+  athletesRoutes,
   sessionsRoutes,
   clipsRoutes,
   strokesRoutes,

@@ -40,3 +40,6 @@ export const changedMeanwhile = (what: string, current: unknown) =>
       current,
     },
   );
+/** One field of the body names something that cannot be used: not there, another club's, or in the wrong state. */
+export const badField = (path: string, message: string) =>
+  new HttpProblem(400, 'bad-request', `${path}: ${message}`, { issues: [{ path, message }] });

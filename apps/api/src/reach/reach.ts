@@ -1,6 +1,6 @@
 import type { SignedInUser } from '@stillstroke/contract/auth';
 import type { Db } from '@stillstroke/db/open';
-import { athletes, clubs, squadCoaches } from '@stillstroke/db/schema/club';
+import { athletes, clubs, squadCoaches, squads } from '@stillstroke/db/schema/club';
 import { clips, sessions } from '@stillstroke/db/schema/film';
 import { and, eq, exists, sql, type SQL } from 'drizzle-orm';
 import { notFound } from '../platform/problem';
@@ -29,6 +29,22 @@ export function athletesInReach(db: Db, user: SignedInUser): SQL {
     case 'guardian':
       return sql`0`;
   }
+}
+
+/** Squads whose athletes the caller may add to or change: an admin's club, a coach's own. A condition on `squads`. */
+export function squadsInReach(db: Db, user: SignedInUser): SQL {
+  const ownClub = eq(squads.clubId, user.clubId);
+  if (user.role === 'admin') return ownClub;
+  if (user.role !== 'coach') return sql`0`;
+  return all(
+    ownClub,
+    exists(
+      db
+        .select({ one: sql`1` })
+        .from(squadCoaches)
+        .where(and(eq(squadCoaches.squadId, squads.id), eq(squadCoaches.userId, user.id))),
+    ),
+  );
 }
 
 function all(...conditions: SQL[]): SQL {

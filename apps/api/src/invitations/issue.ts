@@ -1,0 +1,48 @@
+import { createHash, randomBytes, randomUUID } from 'node:crypto';
+import type { Db } from '@stillstroke/db/open';
+import { invitations } from '@stillstroke/db/schema/sign-in';
+import { and, eq, isNull } from 'drizzle-orm';
+import type { Request } from 'express';
+import type { Settings } from '../platform/settings';
+
+const lifetimeMs = 7 * 24 * 60 * 60 * 1000;
+
+export interface IssuedInvitation {
+  /** Known to whoever gets the link; only its hash is stored. */
+  readonly token: string;
+  /** ISO 8601 UTC. */
+  readonly expiresAt: string;
+}
+
+/** Makes an invitation for an account and spends those given out before. */
+export function issueInvitation(db: Db, now: Date, userId: string): IssuedInvitation {
+  revokeInvitations(db, userId, now);
+  const token = randomBytes(32).toString('base64url');
+  const expiresAt = new Date(now.getTime() + lifetimeMs).toISOString();
+  db.insert(invitations)
+    .values({
+      id: randomUUID(),
+      userId,
+      tokenHash: tokenHash(token),
+      expiresAt,
+      createdAt: now.toISOString(),
+    })
+    .run();
+  return { token, expiresAt };
+}
+
+/** Spends every open invitation of an account. */
+export function revokeInvitations(db: Db, userId: string, now: Date): void {
+  db.update(invitations)
+    .set({ usedAt: now.toISOString() })
+    .where(and(eq(invitations.userId, userId), isNull(invitations.usedAt)))
+    .run();
+}
+
+export const tokenHash = (token: string) => createHash('sha256').update(token).digest('hex');
+
+/** The address to hand to the invited person: under the public address, or else the one the admin came by. */
+export function invitationUrl(settings: Settings, req: Request, token: string): string {
+  const base = settings.publicUrl ?? `${req.protocol}://${req.get('host') ?? 'localhost'}`;
+  return new URL(`/invitation/${token}`, base).href;
+}
