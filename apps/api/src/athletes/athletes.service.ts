@@ -15,8 +15,8 @@ import type { AppContext } from '../platform/context';
 import { behind, readCursor, writeCursor } from '../platform/cursor';
 import { badField } from '../platform/problem';
 import { athleteInReach, athletesInReach, squadsInReach } from '../reach/reach';
+import { verticalAtGlance } from '../trend/glance';
 import { athleteRows } from './athlete-rows';
-import { verticalAtGlances } from './vertical-at-glance';
 
 type Context = Pick<AppContext, 'db' | 'now'>;
 
@@ -124,7 +124,7 @@ interface Row {
 }
 
 function answers(db: Db, rows: readonly Row[]): Athlete[] {
-  const glances = verticalAtGlances(
+  const glances = verticalAtGlance(
     db,
     rows.map((row) => row.id),
   );

@@ -2,8 +2,6 @@ import { createHash, randomBytes, randomUUID } from 'node:crypto';
 import type { Db } from '@stillstroke/db/open';
 import { invitations } from '@stillstroke/db/schema/sign-in';
 import { and, eq, isNull } from 'drizzle-orm';
-import type { Request } from 'express';
-import type { Settings } from '../platform/settings';
 
 const lifetimeMs = 7 * 24 * 60 * 60 * 1000;
 
@@ -41,8 +39,9 @@ export function revokeInvitations(db: Db, userId: string, now: Date): void {
 
 export const tokenHash = (token: string) => createHash('sha256').update(token).digest('hex');
 
-/** The address to hand to the invited person: under the public address, or else the one the admin came by. */
-export function invitationUrl(settings: Settings, req: Request, token: string): string {
-  const base = settings.publicUrl ?? `${req.protocol}://${req.get('host') ?? 'localhost'}`;
-  return new URL(`/invitation/${token}`, base).href;
-}
+/**
+ * The address to hand to the invited person.
+ *
+ * @param base origin under which people reach the product
+ */
+export const invitationUrl = (base: string, token: string) => new URL(`/invitation/${token}`, base).href;

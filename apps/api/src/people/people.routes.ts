@@ -8,10 +8,13 @@ import { invitePerson, listPeople, reinvitePerson, updatePerson, type Invited } 
 
 export function peopleRoutes(context: AppContext): Router {
   const router = Router();
+  // Without a public address set, the one that the admin came by.
+  const baseOf = (req: Request) =>
+    context.settings.publicUrl ?? `${req.protocol}://${req.get('host') ?? 'localhost'}`;
   const withLink = (req: Request, { person, invitation }: Invited) => ({
     person,
     invitation: {
-      url: invitationUrl(context.settings, req, invitation.token),
+      url: invitationUrl(baseOf(req), invitation.token),
       expiresAt: invitation.expiresAt,
     },
   });

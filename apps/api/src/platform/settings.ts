@@ -3,20 +3,33 @@ import * as z from 'zod';
 
 const megabyte = 1024 * 1024;
 
+const wholeNumber = (least: number, most: number) => {
+  const error = `give a whole number from ${least} to ${most}`;
+  return z.coerce.number({ error }).int({ error }).min(least, { error }).max(most, { error });
+};
+const decimal = (least: number, most: number) => {
+  const error = `give a number from ${least} to ${most}`;
+  return z.coerce.number({ error }).min(least, { error }).max(most, { error });
+};
+const oneOf = <T extends readonly [string, ...string[]]>(...words: T) =>
+  z.enum(words, { error: `give ${words.join(' or ')}` });
+
 /** Environment variables and their defaults; everything the operator can set is here and in the README. */
 const environmentSchema = z.object({
-  PORT: z.coerce.number().int().min(0).max(65_535).default(4300),
-  STILLSTROKE_HOST: z.string().min(1).default('127.0.0.1'),
-  STILLSTROKE_DATA: z.string().min(1).default('./data'),
-  STILLSTROKE_DEMO: z.enum(['on', 'off']).default('on'),
-  STILLSTROKE_PUBLIC_URL: z.url().optional(),
+  PORT: wholeNumber(0, 65_535).default(4300),
+  STILLSTROKE_HOST: z.string().default('127.0.0.1'),
+  STILLSTROKE_DATA: z.string().default('./data'),
+  STILLSTROKE_DEMO: oneOf('on', 'off').default('on'),
+  STILLSTROKE_PUBLIC_URL: z
+    .url({ protocol: /^https?$/, error: 'give an address such as https://strokes.example' })
+    .optional(),
   /** Set when a reverse proxy in front ends TLS: cookies become Secure and its address header is trusted. */
-  STILLSTROKE_BEHIND_TLS: z.enum(['on', 'off']).default('off'),
-  STILLSTROKE_MAX_CLIP_MB: z.coerce.number().int().min(1).max(20_480).default(2048),
-  STILLSTROKE_MAX_CLIP_MINUTES: z.coerce.number().min(0.1).max(240).default(20),
-  STILLSTROKE_MAX_PICTURE_SIDE: z.coerce.number().int().min(16).max(8192).default(4096),
-  STILLSTROKE_UNDO_MINUTES: z.coerce.number().min(1).max(43_200).default(60),
-  STILLSTROKE_LOG: z.enum(['silent', 'error', 'warn', 'info', 'debug']).default('warn'),
+  STILLSTROKE_BEHIND_TLS: oneOf('on', 'off').default('off'),
+  STILLSTROKE_MAX_CLIP_MB: wholeNumber(1, 20_480).default(2048),
+  STILLSTROKE_MAX_CLIP_MINUTES: decimal(0.1, 240).default(20),
+  STILLSTROKE_MAX_PICTURE_SIDE: wholeNumber(16, 8192).default(4096),
+  STILLSTROKE_UNDO_MINUTES: decimal(1, 43_200).default(60),
+  STILLSTROKE_LOG: oneOf('silent', 'error', 'warn', 'info', 'debug').default('warn'),
 });
 
 export interface Settings {
@@ -38,7 +51,10 @@ export class BadSettingError extends Error {}
 
 /** Reads the settings once at start. Unknown variables are none of our business; a bad one stops the start. */
 export function readSettings(environment: Record<string, string | undefined>): Settings {
-  const parsed = environmentSchema.safeParse(environment);
+  const parsed = environmentSchema.safeParse(
+    // Set but empty is as good as unset.
+    Object.fromEntries(Object.entries(environment).filter(([, value]) => value !== '')),
+  );
   if (!parsed.success) {
     const issue = parsed.error.issues[0];
     throw new BadSettingError(

@@ -1,0 +1,101 @@
+import { pino } from 'pino';
+import { createApp } from '../../app';
+import { demoAccounts } from '../../auth/demo-accounts';
+import { startPurging } from '../../media/purge';
+import { sweepFilms } from '../../media/sweep';
+import type { AppContext } from '../context';
+import { readSettings, type Settings } from '../settings';
+import { takeDataFolder } from './data-folder';
+import { openDatabaseFile } from './database-file';
+import { fillWhenEmpty, isEmpty, type Filling } from './first-filling';
+import { checkPort, listen, stopListening } from './listen';
+import { makeClub, newClubUsage } from './new-club';
+
+export interface StartOptions {
+  readonly environment: Record<string, string | undefined>;
+  readonly migrationsFolder: string;
+  readonly webFolder: string;
+  /** What an empty database is filled with while the demo is on. */
+  readonly fill: Filling;
+  readonly print: (line: string) => void;
+}
+
+/** How long open requests may take to finish when the server is told to stop. */
+const stopBoundMs = 8000;
+
+/**
+ * Starts the server: settings, port, data folder, database, demo, listening; then prints where it is.
+ *
+ * @returns stops it: what is running is finished, then everything is closed
+ * @throws StartProblem or BadSettingError with a sentence for whoever started it
+ */
+export async function start(options: StartOptions): Promise<() => Promise<void>> {
+  const settings = readSettings(options.environment);
+  await checkPort(settings);
+  const { context, close } = openContext(settings, options.migrationsFolder);
+  try {
+    await sweepFilms(context);
+    await fillWhenEmpty(context, options.fill);
+    const app = createApp(context, { webFolder: options.webFolder });
+    const { server, url } = await listen(app, settings);
+    const stopPurging = startPurging(context);
+    for (const line of greeting(context, url)) options.print(line);
+    return async () => {
+      stopPurging();
+      await stopListening(server, stopBoundMs);
+      close();
+    };
+  } catch (error) {
+    close();
+    throw error;
+  }
+}
+
+/** Makes a club with its first admin on a data folder that no server is using, and prints the admin's link. */
+export function startNewClub(options: StartOptions, words: readonly string[]): void {
+  const { context, close } = openContext(readSettings(options.environment), options.migrationsFolder);
+  try {
+    const link = makeClub(context, words);
+    options.print('The club is there. With this link its admin sets the password, once, within seven days:');
+    options.print(`  ${link}`);
+  } finally {
+    close();
+  }
+}
+
+function openContext(
+  settings: Settings,
+  migrationsFolder: string,
+): { context: AppContext; close: () => void } {
+  const now = () => new Date();
+  const letGo = takeDataFolder(settings.dataFolder);
+  try {
+    const opened = openDatabaseFile(settings.dataFolder, migrationsFolder, now());
+    const log = pino({ level: settings.logLevel });
+    return {
+      context: { settings, db: opened.db, sqlite: opened.sqlite, log, now },
+      close: () => {
+        opened.close();
+        letGo();
+      },
+    };
+  } catch (error) {
+    letGo();
+    throw error;
+  }
+}
+
+function greeting(context: AppContext, url: string): string[] {
+  const lines = [`Stillstroke is at ${url}`];
+  const demo = context.settings.demo ? demoAccounts(context.db) : null;
+  if (demo) {
+    lines.push(`Demo accounts, password ${demo.password}:`);
+    const width = Math.max(...demo.accounts.map((account) => account.email.length));
+    for (const { email, role, clubName } of demo.accounts) {
+      lines.push(`  ${email.padEnd(width)}  ${role}, ${clubName}`);
+    }
+  }
+  if (isEmpty(context)) lines.push(`There is no club yet. Stop the server and make one: ${newClubUsage}`);
+  lines.push('Ctrl+C stops it.');
+  return lines;
+}
