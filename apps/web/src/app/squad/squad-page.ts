@@ -15,12 +15,12 @@ import { apiResource } from '../core/api/api';
 import { lastValue } from '../core/api/last-value';
 import { injectNarrow } from '../core/narrow';
 import { SignInState } from '../core/sign-in/sign-in-state';
+import { NewSessionCard } from '../session/new-session-card';
 import { EmptyState } from '../ui/empty-state';
 import { LoadingLines } from '../ui/loading-lines';
 import { ProblemMessage } from '../ui/problem-message';
 import { AthleteCards } from './athlete-cards';
 import { AthleteTable, type SortChoice } from './athlete-table';
-import { NewSessionCard } from './new-session-card';
 import { change, readFilter, sayRange, toAddress, toQuery, type SquadFilter } from './squad-filter';
 import { WaitingCard } from './waiting-card';
 

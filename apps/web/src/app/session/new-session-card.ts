@@ -1,9 +1,9 @@
-import { ChangeDetectionStrategy, Component, inject } from '@angular/core';
-import { DropFilms } from '../session/drop-films';
-import { OpenNewSession } from '../session/open-new-session';
+import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
+import { DropFilms } from './drop-films';
+import { OpenNewSession } from './open-new-session';
 import { PlumbSign } from '../ui/plumb-sign';
 
-/** The way to a new session from the squad: press it, or drop the clips onto it. */
+/** The way to a new session: press it, or drop the clips onto it. */
 @Component({
   selector: 'st-new-session-card',
   imports: [DropFilms, PlumbSign],
@@ -11,7 +11,8 @@ import { PlumbSign } from '../ui/plumb-sign';
     <button type="button" class="st-card st-card-dark" (click)="open([])" (stDropFilms)="open($event)">
       <st-plumb-sign [size]="28" />
       <span
-        ><strong>New session</strong><span class="how">Drop clips here, or press to choose whose</span></span
+        ><strong>{{ heading() }}</strong
+        ><span class="how">{{ how() }}</span></span
       >
     </button>
   `,
@@ -57,7 +58,15 @@ import { PlumbSign } from '../ui/plumb-sign';
 export class NewSessionCard {
   private readonly newSession = inject(OpenNewSession);
 
+  /** Whose session; null asks. */
+  readonly athlete = input<{ readonly id: string; readonly name: string } | null>(null);
+  readonly heading = input('New session');
+
+  protected readonly how = computed(() =>
+    this.athlete() ? 'Drop clips here, or press' : 'Drop clips here, or press to choose whose',
+  );
+
   protected open(files: readonly File[]): void {
-    void this.newSession.ask(null, files);
+    void this.newSession.ask(this.athlete(), files);
   }
 }
