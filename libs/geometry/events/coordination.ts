@@ -1,6 +1,6 @@
 import type { ArmSide } from '../arm';
 import { type Outcome, ok, refused } from '../outcome';
-import { Z95 } from '../statistics/distributions';
+import { Z95 } from '../statistics/normal';
 import { meanOf } from '../statistics/sample';
 import { type Interval, normalInterval } from '../uncertainty/elbow-interval';
 import type { UncertaintyPart } from '../uncertainty/parts';

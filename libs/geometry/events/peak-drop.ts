@@ -1,10 +1,10 @@
 import type { FrameMark } from '../arm';
 import type { Measured } from '../measures/measured';
 import { type Outcome, ok, refused } from '../outcome';
-import { armAngleUncertainty, type MarkingContext } from '../uncertainty/arm-uncertainty';
+import type { MarkingContext } from '../uncertainty/arm-uncertainty';
 import { largestInterval } from '../uncertainty/largest-of';
 import type { FrameTimesUs } from './frame-times';
-import { type PullMarks, pullMarks, type PullMarksReason, readMark } from './pull-marks';
+import { type PullMarks, pullMarks, type PullMarksReason } from './pull-marks';
 import type { StrokeEvents } from './stroke';
 
 export type PeakDropReason = PullMarksReason | 'too-few-marks';
@@ -25,12 +25,12 @@ export function peakDrop(
 
 /** The same of marks already sorted out. */
 export function peakDropOf(pull: PullMarks): Outcome<Measured, PeakDropReason> {
-  const read = pull.marks.flatMap(({ mark }) => {
-    const u = armAngleUncertainty(mark, pull.context);
-    if (!u.ok) return [];
-    const value = readMark(mark, pull.axes).elbowDropDeg;
-    return [{ value, standard: u.value.elbowDropDeg, parts: u.value.parts.elbowDropDeg, frame: mark.frame }];
-  });
+  const read = pull.marks.map(({ mark, angles, uncertainty }) => ({
+    frame: mark.frame,
+    value: angles.elbowDropDeg,
+    standard: uncertainty.elbowDropDeg,
+    parts: uncertainty.parts.elbowDropDeg,
+  }));
   const [first, ...others] = read;
   if (!first) return refused('too-few-marks');
   const peak = read.reduce((best, next) => (next.value > best.value ? next : best), first);

@@ -1,16 +1,14 @@
 import { type ArmAngles, anglesInAxes, signedElbow } from '../angles/arm-angles';
 import { type ArmMark, type ArmMarkReason, checkArmMark, type FrameMark, type Joint } from '../arm';
+import { bodyAxes, type BodyAxes, bodyVector, rollUncertaintyDeg, turnedAxes } from '../calibration/plumb';
+import { type Outcome, ok, refused } from '../outcome';
 import {
-  bodyAxes,
-  type BodyAxes,
-  bodyVector,
-  type PlumbReason,
-  rollUncertaintyDeg,
-  turnedAxes,
-} from '../calibration/plumb';
-import { type Outcome, ok } from '../outcome';
-import type { MarkingContext } from '../uncertainty/arm-uncertainty';
-import { checkJointUncertainty, type JointUncertaintyReason } from '../uncertainty/joint-uncertainty';
+  armAngleUncertainty,
+  type ArmAngleUncertainty,
+  type ArmUncertaintyReason,
+  type MarkingContext,
+} from '../uncertainty/arm-uncertainty';
+import { checkJointUncertainty } from '../uncertainty/joint-uncertainty';
 import type { CombinedUncertainty } from '../uncertainty/parts';
 import { propagate, type UncertainInput } from '../uncertainty/propagate';
 import { type FrameTimesUs, frameTimeUs } from './frame-times';
@@ -20,6 +18,8 @@ import { type PullReason, type PullSpan, pullSpan, type StrokeEvents } from './s
 export interface PullMark {
   readonly mark: FrameMark;
   readonly timeUs: number;
+  readonly angles: ArmAngles;
+  readonly uncertainty: ArmAngleUncertainty;
 }
 
 /** The marks of a stroke that lie in its pull, in order, with what is needed to read them. */
@@ -34,7 +34,7 @@ export interface PullMarks {
   readonly unusable: readonly { readonly frame: number; readonly reason: ArmMarkReason }[];
 }
 
-export type PullMarksReason = PullReason | PlumbReason | JointUncertaintyReason;
+export type PullMarksReason = PullReason | ArmUncertaintyReason;
 
 /** Sorts out the marks (both ends included) of the pull of a stroke. Marks outside it are left aside. */
 export function pullMarks(
@@ -59,8 +59,14 @@ export function pullMarks(
     const time = frameTimeUs(times, mark.frame);
     if (!time.ok) continue;
     const checked = checkArmMark(mark);
-    if (checked.ok) usable.push({ mark, timeUs: time.value });
-    else unusable.push({ frame: mark.frame, reason: checked.reason });
+    if (!checked.ok) {
+      unusable.push({ frame: mark.frame, reason: checked.reason });
+      continue;
+    }
+    const uncertainty = armAngleUncertainty(mark, context);
+    if (!uncertainty.ok) return refused(uncertainty.reason);
+    const angles = anglesInAxes(mark, axes.value);
+    usable.push({ mark, timeUs: time.value, angles, uncertainty: uncertainty.value });
   }
   const rollUncertaintyRad = (rollDeg.value * Math.PI) / 180;
   return ok({
@@ -79,6 +85,7 @@ export function shareOfPull(span: PullSpan, timeUs: number): number {
   return (timeUs - span.catchUs) / span.lengthUs;
 }
 
+/** The four angles of a mark that has been checked. */
 export function readMark(mark: ArmMark, axes: BodyAxes): ArmAngles {
   return anglesInAxes(mark, axes);
 }

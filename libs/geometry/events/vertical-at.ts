@@ -1,3 +1,4 @@
+import { anglesInAxes } from '../angles/arm-angles';
 import type { ArmMark, FrameMark } from '../arm';
 import type { BodyAxes } from '../calibration/plumb';
 import type { Measured } from '../measures/measured';
@@ -7,14 +8,7 @@ import { normalInterval } from '../uncertainty/elbow-interval';
 import type { UncertainInput } from '../uncertainty/propagate';
 import { wrapDegrees } from '../units/angle';
 import { eventTimeUncertaintyUs, type FrameTimesUs, nearestFrame } from './frame-times';
-import {
-  propagateMarks,
-  type PullMark,
-  type PullMarks,
-  pullMarks,
-  type PullMarksReason,
-  readMark,
-} from './pull-marks';
+import { propagateMarks, type PullMark, type PullMarks, pullMarks, type PullMarksReason } from './pull-marks';
 import type { StrokeEvents } from './stroke';
 
 /** The forearm counts as vertical within this many degrees, unless the coach says otherwise. */
@@ -65,7 +59,7 @@ export function verticalAtOf(
 }
 
 function forearm(mark: ArmMark, axes: BodyAxes): number {
-  return readMark(mark, axes).forearmDeg;
+  return anglesInAxes(mark, axes).forearmDeg;
 }
 
 /** Whether the forearm, turning the shorter way from one mark to the next, comes within tolerance of vertical. */

@@ -4,11 +4,10 @@ import { type ElbowAtMidPull, elbowAtMidPullOf } from '../events/elbow-at-mid-pu
 import { type MidPull, midPullOf, type MidPullReason } from '../events/mid-pull';
 import { peakDropOf, type PeakDropReason } from '../events/peak-drop';
 import { type Phases, type PhasesReason, strokePhases } from '../events/phases';
-import { type PullMarks, pullMarks, type PullMarksReason, readMark, shareOfPull } from '../events/pull-marks';
+import { type PullMarks, pullMarks, type PullMarksReason, shareOfPull } from '../events/pull-marks';
 import type { StrokeEvents } from '../events/stroke';
 import { type VerticalAt, verticalAtOf, type VerticalAtReason } from '../events/vertical-at';
 import { type Outcome, refused } from '../outcome';
-import { armAngleUncertainty } from '../uncertainty/arm-uncertainty';
 import type { Measured } from './measured';
 import type { ReadingContext } from './reading-context';
 
@@ -78,12 +77,10 @@ function nothing(reason: PullMarksReason): Omit<StrokeMeasures, 'phases' | 'midP
 }
 
 function curve(pull: PullMarks, angle: 'forearmDeg' | 'elbowDropDeg'): CurvePoint[] {
-  return pull.marks.flatMap(({ mark, timeUs }) => {
-    const u = armAngleUncertainty(mark, pull.context);
-    if (!u.ok) return [];
-    const share = shareOfPull(pull.span, timeUs);
-    return [
-      { frame: mark.frame, share, deg: readMark(mark, pull.axes)[angle], uncertaintyDeg: u.value[angle] },
-    ];
-  });
+  return pull.marks.map(({ mark, timeUs, angles, uncertainty }) => ({
+    frame: mark.frame,
+    share: shareOfPull(pull.span, timeUs),
+    deg: angles[angle],
+    uncertaintyDeg: uncertainty[angle],
+  }));
 }

@@ -1,6 +1,7 @@
 import { type Outcome, ok, refused } from '../outcome';
 import type { Interval } from '../uncertainty/elbow-interval';
-import { t95, Z95 } from './distributions';
+import { Z95 } from './normal';
+import { t95 } from './distributions';
 import { summarise } from './sample';
 
 /** Agreement of two ways (or two coaches) of reading the same things: Bland and Altman (1986). */

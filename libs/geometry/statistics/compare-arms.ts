@@ -1,6 +1,6 @@
 import { type Outcome, ok, refused } from '../outcome';
 import type { Interval } from '../uncertainty/elbow-interval';
-import { normalBelow, Z95 } from './distributions';
+import { normalBelow, Z95 } from './normal';
 import { meanOf, type SampleReason, type SampleSummary, summarise } from './sample';
 import { strokesToSettle } from './strokes-to-settle';
 import { type MeanDifference, welchOf } from './welch';

@@ -1,30 +1,24 @@
-import erfc from '@stdlib/math-base-special-erfc';
-import erfcinv from '@stdlib/math-base-special-erfcinv';
 import studentCdf from '@stdlib/stats-base-dists-t-cdf';
 import studentQuantile from '@stdlib/stats-base-dists-t-quantile';
 
-/** Probability of a standard normal value below z. */
-export function normalBelow(z: number): number {
-  return erfc(-z / Math.SQRT2) / 2;
-}
+import { normalAt, normalBelow } from './normal';
 
-/** The z below which a standard normal value falls with this probability (0 to 1). */
-export function normalAt(probability: number): number {
-  return -Math.SQRT2 * erfcinv(2 * probability);
-}
+export { normalAt, normalBelow, Z95 } from './normal';
 
-/** Probability of Student's t below this value; the degrees of freedom are positive and need not be whole. */
+/** With more degrees of freedom than this, t is normal to twelve digits. */
+const AS_GOOD_AS_NORMAL = 1e12;
+
+/** Probability of Student's t below this value; the degrees of freedom are positive, need not be whole and may be Infinity. */
 export function studentBelow(t: number, degreesOfFreedom: number): number {
-  return studentCdf(t, degreesOfFreedom);
+  return degreesOfFreedom < AS_GOOD_AS_NORMAL ? studentCdf(t, degreesOfFreedom) : normalBelow(t);
 }
 
 /** The t below which Student's t falls with this probability (0 to 1). */
 export function studentAt(probability: number, degreesOfFreedom: number): number {
-  return studentQuantile(probability, degreesOfFreedom);
+  return degreesOfFreedom < AS_GOOD_AS_NORMAL
+    ? studentQuantile(probability, degreesOfFreedom)
+    : normalAt(probability);
 }
-
-/** z of a two-sided 95 % interval, 1.95996… */
-export const Z95 = normalAt(0.975);
 
 /** t of a two-sided 95 % interval. */
 export function t95(degreesOfFreedom: number): number {

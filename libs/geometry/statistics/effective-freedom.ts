@@ -6,10 +6,10 @@ export interface UncertainPart {
 
 /** Welch–Satterthwaite: (Σ u²)² / Σ (u⁴/ν), JCGM 100:2008, G.4.1; Infinity when every part is known. */
 export function effectiveFreedom(parts: readonly UncertainPart[]): number {
-  const variance = parts.reduce((sum, { standard }) => sum + standard ** 2, 0);
-  const spread = parts.reduce(
-    (sum, { standard, degreesOfFreedom }) => sum + standard ** 4 / degreesOfFreedom,
-    0,
-  );
+  // Over the largest part, so that fourth powers of small numbers do not vanish.
+  const largest = Math.max(...parts.map(({ standard }) => standard));
+  const sum = (of: (part: UncertainPart) => number): number => parts.reduce((all, part) => all + of(part), 0);
+  const variance = sum(({ standard }) => (standard / largest) ** 2);
+  const spread = sum(({ standard, degreesOfFreedom }) => (standard / largest) ** 4 / degreesOfFreedom);
   return variance ** 2 / spread;
 }

@@ -1,7 +1,7 @@
 import type { ArmMark, Joint } from '../arm';
 import { type Outcome, ok, refused } from '../outcome';
 import type { JointUncertaintyPx } from '../uncertainty/joint-uncertainty';
-import { Z95 } from './distributions';
+import { Z95 } from './normal';
 import { meanOf, sumOfSquares, total } from './sample';
 
 export type RepeatabilityReason = 'not-finite' | 'too-few-repeats';

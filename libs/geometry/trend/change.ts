@@ -1,6 +1,7 @@
 import { type Outcome, ok } from '../outcome';
 import { FEWEST_STROKES } from '../statistics/compare-arms';
-import { t95, Z95 } from '../statistics/distributions';
+import { Z95 } from '../statistics/normal';
+import { t95 } from '../statistics/distributions';
 import { welchOf } from '../statistics/welch';
 import type { Interval } from '../uncertainty/elbow-interval';
 import { minimalChange } from './minimal-change';

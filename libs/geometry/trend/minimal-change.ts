@@ -1,5 +1,5 @@
 import { type Outcome, ok, refused } from '../outcome';
-import { Z95 } from '../statistics/distributions';
+import { Z95 } from '../statistics/normal';
 
 /**
  * Smallest change between two sessions that marking could not well produce, at 95 %: 1.96·√(u₁² + u₂²), with u the

@@ -1,5 +1,5 @@
 import { type Outcome, ok, refused } from '../outcome';
-import { Z95 } from '../statistics/distributions';
+import { Z95 } from '../statistics/normal';
 import { medianOf } from '../statistics/sample';
 import type { Interval } from '../uncertainty/elbow-interval';
 import { FEWEST_SESSIONS, type SlopeReason, type TrendPoint } from './slope';

@@ -1,5 +1,6 @@
 import { type Outcome, ok, refused } from '../outcome';
-import { t95, Z95 } from '../statistics/distributions';
+import { Z95 } from '../statistics/normal';
+import { t95 } from '../statistics/distributions';
 import { total } from '../statistics/sample';
 import type { Interval } from '../uncertainty/elbow-interval';
 

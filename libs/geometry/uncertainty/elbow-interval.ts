@@ -1,4 +1,4 @@
-import { normalBelow, Z95 } from '../statistics/distributions';
+import { normalBelow, Z95 } from '../statistics/normal';
 
 /** The two ends of a 95 % interval. */
 export interface Interval {

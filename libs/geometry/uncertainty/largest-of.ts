@@ -1,4 +1,4 @@
-import { normalBelow, Z95 } from '../statistics/distributions';
+import { normalBelow, Z95 } from '../statistics/normal';
 import type { Interval } from './elbow-interval';
 
 /** A reading with its standard uncertainty (above 0, or 0 for an exact one). */
