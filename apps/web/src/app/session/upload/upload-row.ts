@@ -3,7 +3,7 @@ import { MatButtonModule } from '@angular/material/button';
 import { MatProgressBarModule } from '@angular/material/progress-bar';
 import { RouterLink } from '@angular/router';
 import { idSchema } from '@stillstroke/contract/fields';
-import { z } from 'zod';
+import * as z from 'zod';
 import { saySize } from '../../ui/clip-words';
 import { sayDate } from '../../ui/say-date';
 import type { FilmFields } from './film-fields';
