@@ -4,6 +4,7 @@ import type { PlumbLine } from '@stillstroke/geometry/calibration/plumb';
 import type { VideoPoint } from '@stillstroke/geometry/points/video-point';
 import type { DeskMark } from '../state/desk-mark';
 import type { DeskState } from '../state/desk-state';
+import { strokeAt } from '../state/desk-stroke';
 import type { Task } from '../tools/tool-port';
 import { JOINTS, type Joints } from './arm-figure';
 import type { Size } from './spaces';
@@ -15,7 +16,7 @@ export interface TheirMark extends FrameMark {
   readonly arm: ArmSide;
 }
 
-const ARMS: readonly ArmSide[] = ['left', 'right'];
+const LOOK: Task = { kind: 'look' };
 
 /** The Desk as the stage sees it. */
 export class DeskStage implements StageState {
@@ -30,37 +31,44 @@ export class DeskStage implements StageState {
   readonly plumb: Signal<PlumbLine | null>;
   readonly crosshair: Signal<VideoPoint>;
   readonly crosshairMoved: Signal<VideoPoint | null>;
-  readonly arms: Signal<readonly StageArm[]>;
   readonly angles: StageState['angles'];
   readonly neighbours: Signal<readonly ArmMark[]>;
   readonly place: Signal<string>;
   readonly canEdit: Signal<boolean>;
+  private readonly sides: Readonly<Record<ArmSide, Signal<StageArm | null>>>;
 
   constructor(
     private readonly desk: DeskState,
-    theirs: Signal<readonly TheirMark[]>,
+    private readonly theirs: Signal<readonly TheirMark[]>,
+    shownFrame: Signal<number | null>,
   ) {
     const { clip, frame, arm } = desk;
+    const shown = computed(() => shownFrame() ?? frame());
+    const upToDate = computed(() => shown() === frame());
     this.clipId = computed(() => clip().id);
     this.picture = computed(() => ({ width: clip().width, height: clip().height }), { equal: sameSize });
     [this.frame, this.arm, this.joint] = [frame, arm, desk.joint];
-    [this.timesUs, this.task, this.plumb] = [desk.frameTimesUs, desk.task, desk.plumb];
+    [this.timesUs, this.plumb] = [desk.frameTimesUs, desk.plumb];
+    this.task = computed(() => (upToDate() ? desk.task() : LOOK));
     [this.play, this.crosshairMoved] = [desk.play, desk.crosshair];
     this.crosshair = computed(() => desk.marking.crosshairOrMiddle());
-    this.canEdit = computed(() => desk.canEdit && !desk.play.playing());
-    this.arms = computed(() =>
-      ARMS.flatMap((side) => {
-        const joints = jointsOf(desk.markAt(side, frame()));
-        const other = theirs().find((mark) => mark.arm === side && mark.frame === frame()) ?? null;
-        return joints || other ? [{ arm: side, joints: joints ?? {}, theirs: other }] : [];
-      }),
-    );
+    this.canEdit = computed(() => desk.canEdit && upToDate() && !desk.play.playing());
+    this.sides = {
+      left: computed(() => this.readArm('left', shown()), { equal: sameArm }),
+      right: computed(() => this.readArm('right', shown()), { equal: sameArm }),
+    };
     this.angles = computed(() => {
-      const reading = desk.readingAtFrame()[arm()];
+      const reading = desk.readings.read(desk.markAt(arm(), shown()));
       return reading.ok ? reading.value.angles : null;
     });
-    this.neighbours = computed(() => nearestMarks(desk.readings.completeMarks()[arm()], frame()));
-    this.place = computed(() => strokePlace(desk.currentStroke(), frame(), desk.frameTimesUs()));
+    this.neighbours = computed(() => nearestMarks(desk.readings.completeMarks()[arm()], shown()));
+    this.place = computed(() =>
+      strokePlace(strokeAt(desk.strokes(), arm(), shown()), shown(), desk.frameTimesUs()),
+    );
+  }
+
+  armOn(arm: ArmSide): StageArm | null {
+    return this.sides[arm]();
   }
 
   chooseJoint(arm: ArmSide, joint: Joint): void {
@@ -102,6 +110,23 @@ export class DeskStage implements StageState {
   showFrame(frame: number): void {
     this.desk.showFrame(frame);
   }
+
+  private readArm(side: ArmSide, frame: number): StageArm | null {
+    const joints = jointsOf(this.desk.markAt(side, frame));
+    const theirs = this.theirs().find((mark) => mark.arm === side && mark.frame === frame) ?? null;
+    return joints || theirs ? { arm: side, joints: joints ?? {}, theirs } : null;
+  }
+}
+
+/** The same joints in the same places: nothing to draw anew. */
+function sameArm(a: StageArm | null, b: StageArm | null): boolean {
+  if (!a || !b) return a === b;
+  return (
+    a.theirs === b.theirs &&
+    JOINTS.every(
+      (joint) => a.joints[joint]?.x === b.joints[joint]?.x && a.joints[joint]?.y === b.joints[joint]?.y,
+    )
+  );
 }
 
 /** Null for a mark without joints. */

@@ -23,7 +23,8 @@ export interface ScenePlace {
 }
 
 export interface RestingScene {
-  readonly arms: readonly StageArm[];
+  /** The arm that is not chosen. */
+  readonly other: StageArm | null;
   readonly chosen: ArmSide;
   /** Marks of the chosen arm on neighbouring frames, nearest first; empty while the trail is off. */
   readonly trail: readonly ArmMark[];
@@ -38,7 +39,6 @@ export function restingNodes(scene: RestingScene, { view, stage, colours }: Scen
   const trail = scene.trail
     .slice(0, TRAIL_OPACITY.length)
     .map((mark, i) => ({ mark, opacity: TRAIL_OPACITY[i] ?? 0 }));
-  const others = scene.arms.filter(({ arm }) => arm !== scene.chosen);
   return [
     ...(scene.plumb ? [plumbFigureNodes({ plumb: scene.plumb, active: false }, view, stage, colours)] : []),
     ...trail.reverse().map(({ mark, opacity }) => {
@@ -46,7 +46,7 @@ export function restingNodes(scene: RestingScene, { view, stage, colours }: Scen
       const joints = { shoulder, elbow, wrist };
       return armNodes(armFigure({ arm: scene.chosen, joints, weight: 'trail', opacity }, view), colours);
     }),
-    ...others.flatMap((arm) => armWithTheirs(arm, 'other', view, colours)),
+    ...(scene.other ? armWithTheirs(scene.other, 'other', view, colours) : []),
   ];
 }
 

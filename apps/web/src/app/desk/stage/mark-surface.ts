@@ -13,9 +13,9 @@ export class MarkSurface {
     this.stage.add(this.resting, this.moving);
   }
 
-  /** CSS pixels, and device pixels per CSS pixel. */
+  /** CSS pixels, and device pixels per CSS pixel. A change empties both sheets. */
   resize({ width, height }: Size, ratio: number): void {
-    this.stage.size({ width: Math.max(1, width), height: Math.max(1, height) });
+    if (this.stage.width() !== width || this.stage.height() !== height) this.stage.size({ width, height });
     for (const layer of [this.resting, this.moving]) {
       if (layer.getCanvas().getPixelRatio() !== ratio) layer.getCanvas().setPixelRatio(ratio);
     }

@@ -7,7 +7,7 @@ import type { Task } from '../tools/tool-port';
 import type { Joints } from './arm-figure';
 import type { Size } from './spaces';
 
-/** One arm of the current frame: a whole mark, or the joints placed so far. */
+/** One arm on a frame: a whole mark, or the joints placed so far. */
 export interface StageArm {
   readonly arm: ArmSide;
   readonly joints: Joints;
@@ -26,7 +26,11 @@ export interface StagePlay {
   setBehind(behind: boolean): void;
 }
 
-/** What the stage draws and changes. Frames are 0-based, points are of the picture as shown, angles in degrees. */
+/**
+ * What the stage draws and changes. Frames are 0-based, points are of the picture as shown, angles in degrees. The frame
+ * asked for and the shown one differ until its picture is there: marks drawn are the shown frame's, and nothing can be
+ * placed or moved meanwhile.
+ */
 export interface StageState {
   readonly clipId: Signal<string>;
   /** Presentation times as the server knows them, whole microseconds; the browser's index must agree. */
@@ -41,9 +45,9 @@ export interface StageState {
   readonly joint: Signal<Joint>;
   /** What a press on the picture is for. */
   readonly task: Signal<Task>;
-  /** The arms of the current frame, with what is being dragged already in its new place. */
-  readonly arms: Signal<readonly StageArm[]>;
-  /** The chosen arm's angles on the current frame; null while it has no whole mark. */
+  /** What is on an arm on the shown frame, with what is being dragged already in its new place; null for nothing. */
+  armOn(arm: ArmSide): StageArm | null;
+  /** The chosen arm's angles on the shown frame; null while it has no whole mark. */
   readonly angles: Signal<{ readonly forearmDeg: number; readonly elbowDeg: number } | null>;
   /** The chosen arm's marks on neighbouring marked frames, nearest first. */
   readonly neighbours: Signal<readonly ArmMark[]>;
@@ -53,7 +57,7 @@ export interface StageState {
   readonly crosshair: Signal<VideoPoint>;
   /** Another value each time the keyboard moves it; null until then. */
   readonly crosshairMoved: Signal<VideoPoint | null>;
-  /** Where the current frame lies in a stroke of the chosen arm, such as "right pull, 38 %"; empty when in none. */
+  /** Where the shown frame lies in a stroke of the chosen arm, such as "right pull, 38 %"; empty when in none. */
   readonly place: Signal<string>;
   /** Whether joints can be taken hold of at the moment. */
   readonly canEdit: Signal<boolean>;

@@ -5,7 +5,7 @@ import type { StageArm, StageState } from './stage-state';
 /** The stage in words, for those who cannot see it. */
 export function stageWords(state: StageState): string {
   const frame = `Frame ${state.frame()} of ${state.timesUs().length}${state.place() ? `, ${state.place()}` : ''}.`;
-  const arms = state.arms();
+  const arms = (['left', 'right'] as const).flatMap((arm) => state.armOn(arm) ?? []);
   if (arms.length === 0) return `${frame} No arm is marked on it.`;
   return [frame, ...arms.map((arm) => armWords(arm, state))].join(' ');
 }

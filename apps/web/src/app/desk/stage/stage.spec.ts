@@ -1,4 +1,4 @@
-import { Component, signal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, signal } from '@angular/core';
 import { type ComponentFixture, TestBed } from '@angular/core/testing';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import type { DeskState } from '../state/desk-state';
@@ -16,6 +16,7 @@ import { toStage } from './view-transform';
   imports: [Stage],
   template: `<div style="width: 800px; height: 450px"><st-stage [state]="state()" /></div>`,
   providers: [stageProviders],
+  changeDetection: ChangeDetectionStrategy.OnPush,
 })
 class StageHost {
   readonly state = signal<DeskState>(bareDesk());
@@ -76,7 +77,7 @@ async function click(point: PicturePoint): Promise<void> {
   await settle();
 }
 
-/** The strongest pixel within two CSS pixels of a picture point on a layer of marks: 0 is the resting one, 1 the moving. */
+/** The pixel at a picture point on a sheet of marks: 0 is the resting one, 1 the moving one. */
 function drawnAt(layer: 0 | 1, point: PicturePoint): readonly [number, number, number, number] {
   const canvas = (fixture.nativeElement as HTMLElement).querySelectorAll<HTMLCanvasElement>(
     '.konvajs-content canvas',
@@ -129,6 +130,26 @@ describe('the picture', () => {
     await settle();
     expect(element('.caption').textContent).toContain('Frame 9 of 300');
     expect((fixture.nativeElement as HTMLElement).querySelector('.loading')).toBeNull();
+  });
+
+  it('keeps its own marks with it, and lets nothing be placed on a frame that is not seen', async () => {
+    const desk = deskState({ marks: testMarks.filter(({ arm, frame }) => arm === 'right' && frame === 84) });
+    const elbow = asPicturePoint(desk.markAt('right', 84)?.elbow ?? { x: NaN, y: NaN });
+    await show(desk);
+    desk.goTo(84);
+    await settle();
+    source.hold();
+    desk.goTo(90);
+    await settle();
+    expect(drawnAt(1, elbow)[3]).toBeGreaterThan(240);
+    expect(element('.words').textContent).toContain('Right arm: forearm 40°');
+    await click(picturePoint(300, 300));
+    expect(desk.markAt('right', 90)).toBeNull();
+    source.letGo();
+    await settle();
+    expect(drawnAt(1, elbow)[3]).toBe(0);
+    await click(picturePoint(300, 300));
+    expect(desk.markAt('right', 90)?.shoulder?.x).toBeCloseTo(300, 6);
   });
 
   it('shows the newest of several requests and closes the pictures of all others', async () => {
@@ -323,6 +344,46 @@ describe('the plumb', () => {
     expect(desk.setUp.drawingPlumb()).toBe(false);
     desk.undo();
     expect(desk.plumb()).toBeNull();
+  });
+});
+
+describe('the plumb by keyboard', () => {
+  it('is moved by its ends and saved with Enter', async () => {
+    const desk = bareDesk();
+    await show(desk);
+    desk.setUp.startPlumb();
+    await settle();
+    const lower = element('st-plumb-ends button:last-of-type');
+    const key = (name: string, shiftKey = false) => {
+      lower.dispatchEvent(
+        new KeyboardEvent('keydown', { key: name, shiftKey, bubbles: true, cancelable: true }),
+      );
+    };
+    key('ArrowRight', true);
+    key('ArrowRight');
+    key('ArrowUp');
+    await settle();
+    expect(desk.plumb()).toEqual({ top: { x: 640, y: 144 }, bottom: { x: 651, y: 575 } });
+    expect(lower.getAttribute('aria-label')).toContain('leans 1.5°');
+    key('Enter');
+    await settle();
+    expect(desk.undoWords()).toBe('the plumb');
+    expect((fixture.nativeElement as HTMLElement).querySelector('st-plumb-ends')).toBeNull();
+  });
+});
+
+describe('the keyboard', () => {
+  it('brings the crosshair up when it moves it, and a pointer puts it away', async () => {
+    const desk = bareDesk();
+    await show(desk);
+    desk.marking.nudgeJoint(10, 0);
+    await settle();
+    const beside = picturePoint(650, 200);
+    expect(drawnAt(1, beside)[3]).toBeGreaterThan(0);
+    expect(element('.loupe').classList).toContain('shown');
+    fire('pointermove', picturePoint(300, 600));
+    await settle();
+    expect(drawnAt(1, beside)[3]).toBe(0);
   });
 });
 

@@ -46,7 +46,8 @@ export class ToolBench implements ToolPort {
   joints(): readonly JointHandle[] {
     if (!this.state.canEdit()) return [];
     const chosen = this.state.arm();
-    const arms = [...this.state.arms()].sort((a, b) => Number(b.arm === chosen) - Number(a.arm === chosen));
+    const sides = chosen === 'left' ? (['left', 'right'] as const) : (['right', 'left'] as const);
+    const arms = sides.flatMap((side) => this.state.armOn(side) ?? []);
     return arms.flatMap(({ arm, joints }) =>
       JOINTS.flatMap((joint) => {
         const point = joints[joint];
