@@ -175,6 +175,18 @@ export class DeskState {
     return this.core.say(`${name}, ${needWords[next.need]}: frame ${next.frame}.`);
   }
 
+  /** To the nearest marked frame of the chosen arm before or after the shown one. */
+  goToMarked(way: 1 | -1): boolean {
+    const frames = this.readings.completeMarks()[this.place.arm()].map(({ frame }) => frame);
+    const [here, arm] = [this.place.frame(), this.place.arm()];
+    const next = way === 1 ? frames.find((frame) => frame > here) : frames.findLast((frame) => frame < here);
+    if (next === undefined) {
+      return this.core.refuse(`No ${arm} mark ${way === 1 ? 'after' : 'before'} this frame.`);
+    }
+    this.goTo(next);
+    return true;
+  }
+
   /** Frames that a stroke still needs marked, with what for. */
   stillToMark(stroke: DeskStroke): ReturnType<typeof stillToMark> {
     return stillToMark(stroke, this.progress());

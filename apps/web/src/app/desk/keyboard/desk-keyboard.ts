@@ -1,0 +1,45 @@
+import { DestroyRef, DOCUMENT, inject, Injectable } from '@angular/core';
+import { MatDialog } from '@angular/material/dialog';
+import { runCommand, type CommandParts } from './desk-commands';
+import { belongsToControl, findKey } from './find-key';
+import { KeyChoice } from './key-choice';
+import { KeysDialog } from './keys-dialog';
+
+/** Listens for the Desk's keys on the whole page and runs their commands. One per Desk. */
+@Injectable()
+export class DeskKeyboard {
+  private readonly document = inject(DOCUMENT);
+  private readonly dialog = inject(MatDialog);
+  private readonly choice = inject(KeyChoice);
+  private parts: Omit<CommandParts, 'showKeys' | 'leaveStage'> | null = null;
+
+  constructor() {
+    const press = (event: KeyboardEvent) => this.press(event);
+    this.document.addEventListener('keydown', press);
+    inject(DestroyRef).onDestroy(() => this.document.removeEventListener('keydown', press));
+  }
+
+  attach(parts: Omit<CommandParts, 'showKeys' | 'leaveStage'>): void {
+    this.parts = parts;
+  }
+
+  showKeys(): void {
+    if (this.dialog.openDialogs.length === 0) this.dialog.open(KeysDialog, { autoFocus: 'dialog' });
+  }
+
+  private press(event: KeyboardEvent): void {
+    if (!this.parts || event.defaultPrevented || this.dialog.openDialogs.length > 0) return;
+    if (belongsToControl(event)) return;
+    const focused = this.document.activeElement;
+    const onStage = focused?.tagName === 'ST-STAGE';
+    const command = findKey(event, {
+      onStage,
+      canEdit: this.parts.state.canEdit,
+      charactersOn: this.choice.charactersOn(),
+    });
+    if (!command) return;
+    const leaveStage = () => onStage && (focused as HTMLElement).blur();
+    const handled = runCommand(command, { ...this.parts, showKeys: () => this.showKeys(), leaveStage });
+    if (handled) event.preventDefault();
+  }
+}

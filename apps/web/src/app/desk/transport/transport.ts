@@ -1,0 +1,26 @@
+import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import { speeds, type Speed } from '../state/desk-play';
+import type { DeskState } from '../state/desk-state';
+
+/** Under the stage: step, play, speed, arm, and the way to the next frame to mark. Everything here is also a key. */
+@Component({
+  selector: 'st-transport',
+  templateUrl: './transport.html',
+  styleUrl: './transport.scss',
+  host: { role: 'group', 'aria-label': 'Frames and arms' },
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class Transport {
+  readonly state = input.required<DeskState>();
+
+  protected readonly speeds = speeds;
+  protected readonly lastFrame = computed(() => this.state().frameTimesUs().length - 1);
+  protected readonly arms = [
+    { arm: 'left', name: 'Left arm', key: '1' },
+    { arm: 'right', name: 'Right arm', key: '2' },
+  ] as const;
+
+  protected chooseSpeed(event: Event): void {
+    this.state().play.setSpeed(Number((event.target as HTMLSelectElement).value) as Speed);
+  }
+}
