@@ -14,10 +14,9 @@ import { fileURLToPath } from 'node:url';
 import { parseArgs } from 'node:util';
 import { CAST, type Film } from './cast';
 import { openEncoder } from './encoder';
-import { swimmerMotion } from './model/swimmer-motion';
-import { type FilmTruth, filmTruth } from './model/truth';
 import { drawDots } from './dots';
 import { openStudio, type Studio } from './render/studio';
+import { trueFilm } from './true-film';
 
 const FOLDERS = {
   demo: fileURLToPath(new URL('../../apps/api/demo-media/', import.meta.url)),
@@ -45,15 +44,8 @@ if (!values.truth) {
   }
 }
 
-function truthOf(film: Film): FilmTruth {
-  const { style, camera, frames, framesPerSecond, cord } = film;
-  if (!cord) throw new Error(`${film.name} has no plumb in the picture.`);
-  const motion = swimmerMotion(style, frames / framesPerSecond);
-  return filmTruth({ file: `${film.name}.mp4`, motion, camera, frameCount: frames, framesPerSecond, cord });
-}
-
 function writeTruth(film: Film): void {
-  const { frames, ...rest } = truthOf(film);
+  const { frames, ...rest } = trueFilm(film);
   const rows = (arm: 'left' | 'right'): string => frames[arm].map((row) => JSON.stringify(row)).join(',\n');
   const head = JSON.stringify(rest).slice(0, -1);
   writeFileSync(
@@ -72,7 +64,7 @@ async function shoot(studio: Studio, film: Film, dots: boolean): Promise<void> {
     quality: film.quality,
     target: making,
   });
-  const truth = dots ? truthOf(film) : null;
+  const truth = dots ? trueFilm(film) : null;
   const frames = Array.from({ length: film.frames }, (_, frame) => frame);
   let frame = 0;
   await studio.draw(film, frames, async (pixels) => {

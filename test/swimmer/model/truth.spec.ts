@@ -1,18 +1,12 @@
 import { describe, expect, it } from 'vitest';
 import { armAngles } from '@stillstroke/geometry/angles/arm-angles';
-import { CAST, type Film } from '../cast';
+import { CAST } from '../cast';
+import { trueFilm } from '../true-film';
 import { KNUCKLES_M, HAND_M, type ArmPose } from './arm-motion';
 import { levelPoint, project, rolled } from './camera';
 import { earlyPull, latePull, sameAlways, swimmerStyle } from './pulls';
 import { swimmerMotion } from './swimmer-motion';
-import { type FilmTruth, filmTruth } from './truth';
-
-function truthOf(film: Film): FilmTruth {
-  const motion = swimmerMotion(film.style, film.frames / film.framesPerSecond);
-  const cord = film.cord ?? { x: 0, y: 100 };
-  const { camera, frames, framesPerSecond } = film;
-  return filmTruth({ file: `${film.name}.mp4`, motion, camera, frameCount: frames, framesPerSecond, cord });
-}
+import type { FilmTruth } from './truth';
 
 /** Largest distance of a row's angles from those of its own joints, worked out with dot and cross products alone. */
 function worstByHand(truth: FilmTruth): number {
@@ -56,14 +50,14 @@ describe('the true values of the films', () => {
   it.each(CAST.map((film) => [film.name, film] as const))(
     '%s: angles are those of the joints drawn',
     (_, film) => {
-      expect(worstByHand(truthOf(film))).toBeLessThan(0.1);
+      expect(worstByHand(trueFilm(film))).toBeLessThan(0.1);
     },
   );
 
   it.each(CAST.map((film) => [film.name, film] as const))(
     '%s: the product reads the same angles',
     (_, film) => {
-      const truth = truthOf(film);
+      const truth = trueFilm(film);
       let worst = 0;
       for (const row of [...truth.frames.left, ...truth.frames.right]) {
         const [
@@ -96,15 +90,15 @@ describe('the true values of the films', () => {
   it('are the same each time and others for another seed', () => {
     const [film] = CAST;
     if (!film) throw new Error('no film');
-    expect(truthOf(film)).toEqual(truthOf(film));
-    const other = truthOf({ ...film, style: { ...film.style, seed: film.style.seed + 1 } });
-    expect(other.strokes).not.toEqual(truthOf(film).strokes);
+    expect(trueFilm(film)).toEqual(trueFilm(film));
+    const other = trueFilm({ ...film, style: { ...film.style, seed: film.style.seed + 1 } });
+    expect(other.strokes).not.toEqual(trueFilm(film).strokes);
   });
 
   it.each(CAST.map((film) => [film.name, film] as const))(
     '%s: both arms do enough whole strokes',
     (_, film) => {
-      const { strokes } = truthOf(film);
+      const { strokes } = trueFilm(film);
       for (const arm of ['left', 'right']) {
         expect(strokes.filter((stroke) => stroke.arm === arm).length).toBeGreaterThanOrEqual(3);
       }

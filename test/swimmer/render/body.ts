@@ -75,9 +75,8 @@ function joinShoulder(
 ): void {
   const surface = { material: MATERIAL.plain, colour: look.skin };
   for (const [place, out, radius] of [
-    [-0.17, 0.115, 0.075],
-    [-0.3, 0.1, 0.05],
-    [0.02, 0.09, 0.06],
+    [-0.15, 0.085, 0.078],
+    [0.02, 0.08, 0.06],
   ] as const) {
     const { across } = trunkAxes(body, place);
     const root = plus(trunkMiddle(body, place, 0.012, middle), times(across, out * side));
