@@ -10,8 +10,8 @@ import { Probe } from './probe';
 type Limits = Settings['limits'];
 
 /** A long variable-rate film takes seconds; what takes longer is made to. */
-const INDEX_TIME_LIMIT_MS = 60_000;
-const POSTER_TIME_LIMIT_MS = 20_000;
+const INDEX_TIME_LIMIT_MS = 90_000;
+const POSTER_TIME_LIMIT_MS = 45_000;
 
 /** Codecs that every browser with WebCodecs shows, by the names of the frame index. */
 const shownEverywhere = new Set(['avc', 'vp8', 'vp9', 'av1']);
