@@ -22,12 +22,14 @@ export interface DemoFilm extends Known {
 /** The demo is ours: limits that an operator sets for uploads are not meant for it. */
 const unlimited = { clipBytes: Infinity, clipMinutes: Infinity, pictureSide: Infinity };
 
-/** Recognises a film of the demo as an upload would be. */
-export async function recogniseDemoFilm(context: Context, media: string, name: FilmName): Promise<DemoFilm> {
+/** Recognises a film of the demo as an upload would be; null when it is not there. */
+export async function recogniseDemoFilm(
+  context: Context,
+  media: string,
+  name: FilmName,
+): Promise<DemoFilm | null> {
   const film = filmPath(media, name);
-  if (!existsSync(film)) {
-    throw new Error(`The demo's film ${film} is missing. Bring it back, or start with STILLSTROKE_DEMO=off.`);
-  }
+  if (!existsSync(film)) return null;
   const folder = openIncoming(context.settings);
   try {
     await copyFile(film, placeOfFilm(folder));

@@ -40,8 +40,10 @@ export async function seedDemo(context: AppContext, options: SeedOptions = {}): 
   const films = await recogniseAll(context, media, season);
   const waiting = new Map<DemoClip, WaitingClip>();
   try {
-    for (const clip of clipsOf(season))
-      waiting.set(clip, await layOutClip(context, known(films, clip), clip));
+    for (const clip of clipsOf(season)) {
+      const film = films.get(clip.film);
+      if (film) waiting.set(clip, await layOutClip(context, film, clip));
+    }
     const passwordHash = await hashPassword(DEMO_PASSWORD);
     const enter = context.sqlite.transaction((): boolean => {
       // Somebody else may have filled it meanwhile.
@@ -70,19 +72,15 @@ async function recogniseAll(
   season: readonly DemoClub[],
 ): Promise<Map<FilmName, DemoFilm>> {
   const names = [...new Set(clipsOf(season).map(({ film }) => film))];
-  const films = await Promise.all(names.map((name) => recogniseDemoFilm(context, media, name)));
-  return new Map(
-    names.flatMap((name, at) => {
-      const film = films[at];
-      return film ? [[name, film] as const] : [];
+  const films = new Map<FilmName, DemoFilm>();
+  await Promise.all(
+    names.map(async (name) => {
+      const film = await recogniseDemoFilm(context, media, name);
+      if (film) films.set(name, film);
+      else context.log.warn({ film: name }, 'a film of the demo is missing; its clips are left out');
     }),
   );
-}
-
-function known(films: ReadonlyMap<FilmName, DemoFilm>, clip: DemoClip): DemoFilm {
-  const film = films.get(clip.film);
-  if (!film) throw new Error(`The demo's film ${clip.film} was not recognised.`);
-  return film;
+  return films;
 }
 
 function enterSeason(
@@ -114,7 +112,7 @@ function enterSession(
   const session = createSession(then, coach, athleteId, { date, place, ...(note !== null && { note }) });
   for (const clip of clips) {
     const laidOut = waiting.get(clip);
-    if (!laidOut) throw new Error(`The film of ${clip.name} was not laid out.`);
+    if (!laidOut) continue;
     const { id } = keepFilm(then, athleteId, session.id, laidOut.incoming, laidOut.film);
     if (clip.marking) enterMarking(then, coach, id, marksFromTruth(laidOut.truth, clip.marking));
   }
