@@ -22,10 +22,10 @@ const OUT_OF_REACH = 8;
  */
 export function largestInterval(readings: readonly [Reading, ...Reading[]]): Interval {
   const top = readings.reduce((best, next) => (next.value > best.value ? next : best));
+  const topAt = readings.indexOf(top);
   const others = readings.filter(
-    (reading) =>
-      reading !== top &&
-      top.value - reading.value < OUT_OF_REACH * Math.hypot(top.standard, reading.standard),
+    (reading, at) =>
+      at !== topAt && top.value - reading.value < OUT_OF_REACH * Math.hypot(top.standard, reading.standard),
   );
   const below = (c: number): number =>
     others.reduce(
