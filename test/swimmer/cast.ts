@@ -191,6 +191,7 @@ export const CAST: readonly Film[] = [
   film({
     name: 'jakub-autumn',
     seconds: 6.4,
+    framesPerSecond: 25,
     style: swimmerStyle({
       seed: 41,
       periodS: 1.22,
@@ -205,6 +206,7 @@ export const CAST: readonly Film[] = [
   film({
     name: 'petra-autumn',
     seconds: 6.4,
+    framesPerSecond: 25,
     style: swimmerStyle({
       seed: 61,
       periodS: 1.4,
@@ -216,6 +218,7 @@ export const CAST: readonly Film[] = [
   film({
     name: 'wren-autumn',
     seconds: 6,
+    framesPerSecond: 25,
     style: swimmerStyle({
       seed: 71,
       periodS: 1.18,
@@ -228,7 +231,7 @@ export const CAST: readonly Film[] = [
   }),
   film({
     name: 'ines-november-back',
-    seconds: 6.4,
+    seconds: 5.4,
     style: inesStyle(8, 0.58, 3, 11),
     look: INES_LOOK,
     rollDeg: -0.7,
