@@ -1,13 +1,12 @@
 import { fileURLToPath } from 'node:url';
 import { build } from 'esbuild';
 
-const FOLDER = fileURLToPath(new URL('./', import.meta.url));
 const WORKER = fileURLToPath(new URL('../../apps/web/src/app/playback/frame.worker.ts', import.meta.url));
 
-/** Bundles a page's script and the frame worker; answers their texts by the paths under which the page asks for them. */
+/** Bundles a page's script, given by its file, and the frame worker; answers their texts by the paths under which the page asks for them. */
 export async function bundlePage(page: string): Promise<Record<string, string>> {
   return {
-    '/page.js': await bundle(`${FOLDER}${page}`),
+    '/page.js': await bundle(page),
     '/frame.worker': await bundle(WORKER),
   };
 }

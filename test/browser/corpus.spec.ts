@@ -25,10 +25,11 @@ const manifest = JSON.parse(readFileSync(`${FOLDER}manifest.json`, 'utf8')) as {
 /** Room for some thirteen of the small pictures, so that every clip has to be let go and decoded again. */
 const BUDGET = 400_000;
 const table: string[] = [];
+const PAGE = fileURLToPath(new URL('corpus-page.ts', import.meta.url));
 let server: MediaServer;
 
 test.beforeAll(async () => {
-  server = await MediaServer.start(await bundlePage('corpus-page.ts'), (name) => `${FOLDER}${name}`);
+  server = await MediaServer.start(await bundlePage(PAGE), (name) => `${FOLDER}${name}`);
 });
 
 test.afterAll(async () => {

@@ -10,6 +10,7 @@ import { MediaServer } from './media-server';
 const FOLDER = fileURLToPath(new URL('../nasty-media/', import.meta.url));
 const KEYS = '/media/every-frame-a-key.mp4';
 const LONG = '/media/one-key-frame.mp4';
+const PAGE = fileURLToPath(new URL('corpus-page.ts', import.meta.url));
 let server: MediaServer;
 let scratch: string;
 let bigBytes: number;
@@ -17,7 +18,7 @@ let bigBytes: number;
 test.beforeAll(async () => {
   scratch = mkdtempSync(join(tmpdir(), 'big-clip-'));
   bigBytes = writeBigClip(`${FOLDER}every-frame-a-key.mp4`, join(scratch, 'big.mp4'), 17 * 2 ** 20);
-  server = await MediaServer.start(await bundlePage('corpus-page.ts'), (name) =>
+  server = await MediaServer.start(await bundlePage(PAGE), (name) =>
     name === 'big.mp4' ? join(scratch, name) : `${FOLDER}${name}`,
   );
 });
