@@ -60,20 +60,25 @@ function report(clip, d) {
     row('drawing alone', d.drawing),
     row('cold random seek', d.seek),
     row('raw decoding from the key frame', d.rawSeek),
-    row('<video> one frame back', d.videoBack),
+    row('<video> one frame back, arrived', d.videoBack),
+    row('<video> one frame back, painted', d.videoBackPainted),
   ];
   const cold = pairedRatio(d.seek, d.rawSeek);
-  const back = median(d.videoBack) / median(d.backPainted);
-  const above = p95(d.backPainted) - p95(d.drawing);
+  const ready = median(d.videoBack) / median(d.backReady);
+  const back = median(d.videoBackPainted) / median(d.backPainted);
+  const drawingBack = d.drawing.slice(d.forwardPainted.length);
+  const above = p95(d.backPainted.map((painted, n) => painted - drawingBack[n]));
   console.log(`\n${clip.name}\n${table(['', 'median', 'p95', 'n'], rows)}`);
   console.log(
     `cold random seek against raw decoding: median ${times(cold.median)}, p95 ${times(cold.p95)} (goal ≤ 1.25×)`,
   );
-  console.log(`step back, painted, against <video>: ${times(back)} as fast (goal ≥ 20×)`);
   console.log(
-    `step back, painted, p95 above drawing alone: ${ms(above)} (goal ≤ one display frame, 16.7 ms)`,
+    `step back against <video>: ready ${times(ready)}, painted ${times(back)} as fast (goal ≥ 20×)`,
   );
-  return { cold, back, above, durations: d };
+  console.log(
+    `step back, painted, above drawing the same frame again: p95 ${ms(above)} (goal ≤ one display frame, 16.7 ms)`,
+  );
+  return { cold, ready, back, above, durations: d };
 }
 
 if (process.argv[1] === fileURLToPath(import.meta.url)) await benchFrames({ only: process.argv[2] ?? '' });
