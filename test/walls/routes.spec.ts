@@ -1,5 +1,5 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { TestBrowser } from '../../apps/api/src/platform/test-browser';
+import type { TestBrowser } from '../../apps/api/src/platform/test-browser';
 import { openTestClub, type TestClub } from '../../apps/api/src/platform/test-club';
 import { mountedRoutes } from './mounted-routes';
 import { callers, placeThings, routes, type Caller, type RouteRow, type Things } from './routes-table';
