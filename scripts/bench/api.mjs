@@ -125,7 +125,7 @@ async function timeLargeClub(dataFolder) {
 
 /** The figures of one measure of one athlete straight from SQLite, median of 50. */
 function timeBareQuery(dataFolder, athleteId) {
-  const db = new Database(join(dataFolder, 'stillstroke.db'), { readonly: true });
+  const db = new Database(join(dataFolder, 'stillstroke.sqlite'), { readonly: true });
   const query = db.prepare(
     `select s.date, k.arm, f.value, f.uncertainty from sessions s join clips c on c.session_id = s.id
      join strokes k on k.clip_id = c.id join stroke_figures f on f.stroke_id = k.id

@@ -7,7 +7,7 @@ import Database from 'better-sqlite3';
  * clip: its strokes and figures, not its file. The server must be stopped. Answers one of the athletes.
  */
 export function addLargeClub(dataFolder, { athleteCount = 50, sessionsEach = 200 } = {}) {
-  const db = new Database(join(dataFolder, 'stillstroke.db'));
+  const db = new Database(join(dataFolder, 'stillstroke.sqlite'));
   db.pragma('foreign_keys = ON');
   const model = db
     .prepare(
