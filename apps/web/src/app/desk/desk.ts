@@ -12,7 +12,6 @@ import {
   signal,
   untracked,
 } from '@angular/core';
-import { MatTab, MatTabContent, MatTabGroup } from '@angular/material/tabs';
 import { RouterLink } from '@angular/router';
 import { DeskBar } from './bar/desk-bar';
 import { Conflicts } from './conflicts/conflicts';
@@ -28,9 +27,15 @@ import { isComplete, markKey } from './state/desk-mark';
 import type { DeskState } from './state/desk-state';
 import { Strip } from './strip/strip';
 import { StrokesPanel } from './strokes/strokes-panel';
+import { PanelTabs, type PanelTab } from './tabs/panel-tabs';
 import { Transport } from './transport/transport';
 
-const tabs = { readings: 0, strokes: 1, marks: 2, setUp: 3 } as const;
+const panels: readonly PanelTab[] = [
+  { id: 'readings', label: 'Readings' },
+  { id: 'strokes', label: 'Strokes' },
+  { id: 'marks', label: 'Marks' },
+];
+const setUp: PanelTab = { id: 'set-up', label: 'Set-up' };
 /** How long a sentence stays on the stage. */
 const SAID_FOR_MS = 5000;
 /** Frames are announced only where the coach stays for this long. */
@@ -43,9 +48,7 @@ const FRAME_SAID_AFTER_MS = 500;
     Conflicts,
     DeskBar,
     MarksList,
-    MatTab,
-    MatTabContent,
-    MatTabGroup,
+    PanelTabs,
     Readings,
     RouterLink,
     SetUpPanel,
@@ -74,9 +77,10 @@ export class Desk {
     computation: (state) =>
       untracked(() => state.canEdit && state.plumbAssumed() && state.marks().size === 0),
   });
-  protected readonly tab = linkedSignal<boolean, number>({
+  protected readonly panels = computed(() => (this.state().canEdit ? [...panels, setUp] : panels));
+  protected readonly panel = linkedSignal<boolean, string>({
     source: this.firstVisit,
-    computation: (first) => (first ? tabs.setUp : tabs.readings),
+    computation: (first) => (first ? 'set-up' : 'readings'),
   });
   protected readonly reading = computed(() => {
     const reading = this.state().readingAtFrame()[this.state().arm()];

@@ -38,6 +38,7 @@ export class PlaceInAddress {
     this.written = asked;
     if (arm === 'left' || arm === 'right') desk.chooseArm(arm);
     if (frame !== undefined) desk.goTo(frame);
+    else if (arm === undefined) desk.goToFirstCatch();
   }
 
   private write(): void {

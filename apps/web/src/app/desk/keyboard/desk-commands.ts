@@ -8,7 +8,14 @@ export interface CommandParts {
   readonly state: DeskState;
   readonly stage: Pick<
     StageController,
-    'fit' | 'zoomIn' | 'zoomOut' | 'toggleLoupe' | 'toggleTrail' | 'loupeWanted' | 'trailWanted'
+    | 'fit'
+    | 'zoomIn'
+    | 'zoomOut'
+    | 'toggleLoupe'
+    | 'toggleTrail'
+    | 'loupeWanted'
+    | 'trailWanted'
+    | 'panKeyHeld'
   >;
   readonly showKeys: () => void;
   readonly leaveStage: () => void;
@@ -71,6 +78,7 @@ const commands: Readonly<Record<KeyCommand, Command>> = {
   fit: ({ stage }) => stage.fit(),
   'zoom-in': ({ stage }) => stage.zoomIn(),
   'zoom-out': ({ stage }) => stage.zoomOut(),
+  'hold-picture': ({ stage }) => stage.panKeyHeld.set(true),
   'toggle-loupe': ({ stage, state }) => {
     stage.toggleLoupe();
     state.say(stage.loupeWanted() ? 'Loupe on.' : 'Loupe off.');

@@ -15,8 +15,17 @@ export class DeskKeyboard {
 
   constructor() {
     const press = (event: KeyboardEvent) => this.press(event);
+    // Any key that comes up, and leaving the window, lets the picture go.
+    const letGo = () => this.parts?.stage.panKeyHeld.set(false);
+    const window = this.document.defaultView;
     this.document.addEventListener('keydown', press);
-    inject(DestroyRef).onDestroy(() => this.document.removeEventListener('keydown', press));
+    this.document.addEventListener('keyup', letGo);
+    window?.addEventListener('blur', letGo);
+    inject(DestroyRef).onDestroy(() => {
+      this.document.removeEventListener('keydown', press);
+      this.document.removeEventListener('keyup', letGo);
+      window?.removeEventListener('blur', letGo);
+    });
   }
 
   attach(parts: Omit<CommandParts, 'showKeys' | 'leaveStage'>): void {

@@ -38,6 +38,7 @@ export type KeyCommand =
   | 'fit'
   | 'zoom-in'
   | 'zoom-out'
+  | 'hold-picture'
   | 'toggle-loupe'
   | 'toggle-trail'
   | 'leave-stage'
@@ -211,6 +212,10 @@ export const keyGroups: readonly KeyGroup[] = [
           { key: '=', command: 'zoom-in' },
           { key: '-', command: 'zoom-out' },
         ],
+      },
+      {
+        says: 'Hold down to move the picture by dragging',
+        presses: [{ key: 'g', command: 'hold-picture' }],
       },
       { says: 'Loupe on or off', presses: [{ key: 'l', command: 'toggle-loupe' }] },
       { says: 'Marks of the frames around, on or off', presses: [{ key: 'm', command: 'toggle-trail' }] },

@@ -67,6 +67,10 @@ export class MarksList {
     return point ? String(Math.round(point[axis] * 100) / 100) : '';
   }
 
+  protected isMarked({ arm, frame }: DeskMark): boolean {
+    return this.state().marks().has(markKey(arm, frame));
+  }
+
   protected armName(mark: DeskMark): string {
     return capital(mark.arm);
   }

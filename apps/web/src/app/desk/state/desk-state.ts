@@ -12,7 +12,7 @@ import { markKey, type DeskMark } from './desk-mark';
 import { DeskPlace } from './desk-place';
 import { DeskPlay } from './desk-play';
 import { DeskReadings, type FrameReading } from './desk-readings';
-import { deskStrokeOf, nameStroke, type DeskStroke } from './desk-stroke';
+import { deskStrokeOf, isWhole, nameStroke, type DeskStroke } from './desk-stroke';
 import { Marking } from './marking';
 import { needWords, nextToMark, stillToMark, type Progress } from './next-to-mark';
 import { SetUpCommands } from './set-up-commands';
@@ -185,6 +185,14 @@ export class DeskState {
     }
     this.goTo(next);
     return true;
+  }
+
+  /** Where a clip is opened when no frame is asked for: the first catch, so that a worked-on clip shows its readings. */
+  goToFirstCatch(): void {
+    const first = this.strokes().find(isWhole);
+    if (!first) return;
+    this.chooseArm(first.arm);
+    this.goTo(first.catch);
   }
 
   /** Frames that a stroke still needs marked, with what for. */
