@@ -80,7 +80,10 @@ export class AthletePage {
   protected readonly own = computed(() => this.user()?.athleteId === this.athleteId());
 
   constructor() {
-    effect(() => this.title.show(this.athlete()?.name));
+    effect(() => {
+      const name = this.athlete()?.name;
+      if (name) this.title.show(name);
+    });
   }
 
   protected showOlder(): void {

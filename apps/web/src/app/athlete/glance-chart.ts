@@ -1,10 +1,23 @@
-import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import {
+  afterNextRender,
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  DestroyRef,
+  inject,
+  input,
+  signal,
+  viewChild,
+  type ElementRef,
+} from '@angular/core';
 import type { Trend, TrendPoint } from '@stillstroke/contract/trend';
 import { scaleLinear, scaleUtc } from 'd3-scale';
 import { line } from 'd3-shape';
 import { sayDate } from '../ui/say-date';
 
-const width = 640;
+/** Until the page has been laid out once. */
+const usualWidth = 640;
+const leastWidth = 160;
 const height = 150;
 const normal95 = 1.96;
 /** As on the Trend page: fewer sessions are points only. */
@@ -21,6 +34,10 @@ const oneThird = 1 / 3;
 export class GlanceChart {
   readonly trend = input.required<Trend>();
 
+  private readonly plot = viewChild.required<ElementRef<HTMLElement>>('plot');
+
+  /** The picture is drawn at the width it has, so that its shapes keep their size on a phone. */
+  protected readonly width = signal(usualWidth);
   private readonly points = computed(() => this.trend().arms.flatMap(({ points }) => points));
   private readonly x = computed(() => {
     const times = this.points().map(({ date }) => Date.parse(date));
@@ -28,7 +45,7 @@ export class GlanceChart {
     const pad = first === last ? 86_400_000 : 0;
     return scaleUtc()
       .domain([first - pad, last + pad])
-      .range([14, width - 14]);
+      .range([14, this.width() - 14]);
   });
   private readonly y = computed(() => {
     const ends = this.points().flatMap(({ mean, uncertainty }) => [
@@ -44,7 +61,8 @@ export class GlanceChart {
   /** Lines across, with their place from the top in percent for the words beside them. */
   protected readonly grid = computed(() =>
     this.y()
-      .ticks(3)
+      .ticks(4)
+      .filter((_, index, all) => index % Math.ceil(all.length / 4) === 0)
       .map((share) => ({
         y: this.y()(share),
         top: (this.y()(share) / height) * 100,
@@ -73,6 +91,17 @@ export class GlanceChart {
       ? [first].flatMap((date) => (date ? sayDate(date) : []))
       : [sayDate(first), sayDate(last)];
   });
+
+  constructor() {
+    const destroyed = inject(DestroyRef);
+    afterNextRender(() => {
+      const observer = new ResizeObserver(([entry]) => {
+        if (entry) this.width.set(Math.max(leastWidth, Math.round(entry.contentRect.width)));
+      });
+      observer.observe(this.plot().nativeElement);
+      destroyed.onDestroy(() => observer.disconnect());
+    });
+  }
 
   private drawn({ date, mean, uncertainty, sessionId }: TrendPoint) {
     const spread = normal95 * uncertainty;

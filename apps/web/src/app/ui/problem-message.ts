@@ -1,13 +1,17 @@
 import { ChangeDetectionStrategy, Component, computed, input, output } from '@angular/core';
+import { RouterLink } from '@angular/router';
 import { problemOf } from '../core/api/problem-of';
 
 /** What stands in place of something that could not be read: the reason in words, and a way on. */
 @Component({
   selector: 'st-problem-message',
+  imports: [RouterLink],
   template: `
     <p class="words">{{ words() }}</p>
     @if (canRetry()) {
       <button type="button" (click)="retry.emit()">Try again</button>
+    } @else {
+      <p class="words"><a class="st-link" routerLink="/">Go to your start page</a></p>
     }
     <ng-content />
   `,

@@ -14,7 +14,7 @@ const inset = 6;
       <svg viewBox="0 0 124 26" width="124" height="26" role="img" [attr.aria-label]="words()">
         <title>{{ words() }}. Dotted: one third of the pull, common practice, no source.</title>
         <line class="rail" x1="2" x2="122" y1="13" y2="13" />
-        <line class="third" [attr.x1]="third" [attr.x2]="third" y1="5" y2="21" />
+        <line class="third" [attr.x1]="third" [attr.x2]="third" y1="1" y2="25" />
         @if (left() !== null) {
           <rect [attr.x]="place(left()) - 4" y="4.5" width="8" height="8" />
         }
