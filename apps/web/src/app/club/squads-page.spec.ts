@@ -27,9 +27,13 @@ describe('SquadsPage', () => {
       masters,
       { ...masters, id: 'j', name: 'Juniors', coaches: [], athleteCount: 1, deactivated: true },
     ]);
-    expect(test.text).toContain('Owen Hale 5 athletes');
-    expect(test.text).toContain('Juniors deactivated');
-    expect(test.text).toContain('no coach yet 1 athlete');
+    const said = [...test.element.querySelectorAll('li')].map((row) =>
+      [...row.querySelectorAll('h2 > *, p')].map((part) => part.textContent?.trim()),
+    );
+    expect(said).toEqual([
+      ['Masters squad', 'Owen Hale', '5 athletes'],
+      ['Juniors', 'deactivated', 'no coach yet', '1 athlete'],
+    ]);
     expect(await pageFindings(test.element)).toEqual([]);
   });
 

@@ -1,3 +1,4 @@
+import { Location } from '@angular/common';
 import { provideHttpClient } from '@angular/common/http';
 import { HttpTestingController, provideHttpClientTesting } from '@angular/common/http/testing';
 import { ChangeDetectionStrategy, Component } from '@angular/core';
@@ -79,7 +80,7 @@ describe('Shell', () => {
     const { element, router } = await open('/squad', coach);
     await router.navigateByUrl('/club');
     expect(element.querySelector('h1')?.textContent).toContain('not for you');
-    expect(router.url).toBe('/squad');
+    expect(TestBed.inject(Location).path()).toBe('/squad');
   });
 
   it('leaves a full page the whole window', async () => {

@@ -21,7 +21,6 @@ export class Ask {
     const { AskDialog } = await import('./ask-dialog');
     const dialog = this.dialog.open<unknown, Question, boolean>(AskDialog, {
       data: question,
-      role: 'alertdialog',
       width: '30rem',
     });
     return (await firstValueFrom(dialog.afterClosed())) === true;
