@@ -1,6 +1,5 @@
 import { existsSync } from 'node:fs';
 import { join } from 'node:path';
-import { seedDemo } from './demo/seed';
 import { BadSettingError } from './platform/settings';
 import { start, startNewClub, type StartOptions } from './platform/start/start';
 import { StartProblem } from './platform/start/start-problem';
@@ -13,7 +12,6 @@ const options: StartOptions = {
   environment: process.env,
   migrationsFolder: bundled ? join(import.meta.dirname, 'migrations') : join(root, 'libs/db/migrations'),
   webFolder: join(root, 'dist/web'),
-  fill: async (context) => void (await seedDemo(context)),
   print: (line) => void process.stdout.write(`${line}\n`),
 };
 

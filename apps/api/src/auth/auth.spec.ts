@@ -4,7 +4,7 @@ import { eq } from 'drizzle-orm';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { emailOf, openTestClub, testPassword, type TestClub } from '../platform/test-club';
 import { attemptLimits } from './attempt-limits';
-import { demoPassword } from './demo-accounts';
+import { DEMO_PASSWORD } from '../demo/season';
 
 let club: TestClub;
 beforeEach(async () => {
@@ -279,7 +279,7 @@ describe('the sign-in page', () => {
       .run();
     const page = await club.anonymous().get('/api/auth/page');
     expect(page.body).toMatchObject({
-      demo: { password: demoPassword, accounts: [{ name: 'Mara Holt', role: 'coach' }] },
+      demo: { password: DEMO_PASSWORD, accounts: [{ name: 'Mara Holt', role: 'coach' }] },
     });
     club.close();
     club = await openTestClub({ settings: { demo: false } });

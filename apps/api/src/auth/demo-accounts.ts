@@ -3,8 +3,7 @@ import type { getSignInPage } from '@stillstroke/contract/auth';
 import type { Db } from '@stillstroke/db/open';
 import { clubs, users } from '@stillstroke/db/schema/club';
 import { and, eq, inArray, isNull, isNotNull } from 'drizzle-orm';
-
-export const demoPassword = 'stillwater-demo';
+import { DEMO_PASSWORD } from '../demo/season';
 
 /** The demo's accounts that the sign-in page offers, in the order it shows them. */
 export const demoEmails = [
@@ -28,5 +27,5 @@ export function demoAccounts(db: Db): AnswerOf<typeof getSignInPage>['demo'] {
   if (found.length === 0) return null;
   const order: readonly string[] = demoEmails;
   found.sort((a, b) => order.indexOf(a.email) - order.indexOf(b.email));
-  return { password: demoPassword, accounts: found };
+  return { password: DEMO_PASSWORD, accounts: found };
 }

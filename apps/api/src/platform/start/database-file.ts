@@ -1,4 +1,3 @@
-import { existsSync, rmSync } from 'node:fs';
 import { join } from 'node:path';
 import { backupDatabase } from '@stillstroke/db/backup';
 import { DatabaseTooNewError, migrateDatabase, migrationsPending } from '@stillstroke/db/migrate';
@@ -6,8 +5,6 @@ import { openDatabase, type OpenDatabase } from '@stillstroke/db/open';
 import { StartProblem } from './start-problem';
 
 export const databasePath = (dataFolder: string) => join(dataFolder, 'stillstroke.sqlite');
-/** There while a new database is being filled for the first time; such a one has never been served. */
-export const unfinishedMark = (dataFolder: string) => join(dataFolder, 'filling-unfinished');
 
 /**
  * Opens the database of a data folder and brings it to the newest schema, after a copy where there is something to lose.
@@ -15,7 +12,6 @@ export const unfinishedMark = (dataFolder: string) => join(dataFolder, 'filling-
  * @throws StartProblem when it is damaged or was written by a newer version
  */
 export function openDatabaseFile(dataFolder: string, migrationsFolder: string, now: Date): OpenDatabase {
-  dropUnfinished(dataFolder);
   const path = databasePath(dataFolder);
   let opened: OpenDatabase | null = null;
   try {
@@ -42,12 +38,4 @@ export function openDatabaseFile(dataFolder: string, migrationsFolder: string, n
     }
     throw error;
   }
-}
-
-/** A first filling that was interrupted is begun again from nothing. */
-function dropUnfinished(dataFolder: string): void {
-  if (!existsSync(unfinishedMark(dataFolder))) return;
-  const path = databasePath(dataFolder);
-  for (const file of [path, `${path}-wal`, `${path}-shm`]) rmSync(file, { force: true });
-  rmSync(unfinishedMark(dataFolder));
 }

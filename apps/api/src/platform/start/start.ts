@@ -1,13 +1,14 @@
+import { clubs } from '@stillstroke/db/schema/club';
 import { pino } from 'pino';
 import { createApp } from '../../app';
 import { demoAccounts } from '../../auth/demo-accounts';
 import { startPurging } from '../../media/purge';
+import { seedDemo } from '../../demo/seed';
 import { sweepFilms } from '../../media/sweep';
 import type { AppContext } from '../context';
 import { readSettings, type Settings } from '../settings';
 import { takeDataFolder } from './data-folder';
 import { openDatabaseFile } from './database-file';
-import { fillWhenEmpty, isEmpty, type Filling } from './first-filling';
 import { checkPort, listen, stopListening } from './listen';
 import { makeClub, newClubUsage } from './new-club';
 
@@ -15,8 +16,6 @@ export interface StartOptions {
   readonly environment: Record<string, string | undefined>;
   readonly migrationsFolder: string;
   readonly webFolder: string;
-  /** What an empty database is filled with while the demo is on. */
-  readonly fill: Filling;
   readonly print: (line: string) => void;
 }
 
@@ -35,7 +34,7 @@ export async function start(options: StartOptions): Promise<() => Promise<void>>
   const { context, close } = openContext(settings, options.migrationsFolder);
   try {
     await sweepFilms(context);
-    await fillWhenEmpty(context, options.fill);
+    if (settings.demo) await seedDemo(context);
     const app = createApp(context, { webFolder: options.webFolder });
     const { server, url } = await listen(app, settings);
     const stopPurging = startPurging(context);
@@ -95,7 +94,8 @@ function greeting(context: AppContext, url: string): string[] {
       lines.push(`  ${email.padEnd(width)}  ${role}, ${clubName}`);
     }
   }
-  if (isEmpty(context)) lines.push(`There is no club yet. Stop the server and make one: ${newClubUsage}`);
+  const hasClub = context.db.select({ id: clubs.id }).from(clubs).limit(1).get() !== undefined;
+  if (!hasClub) lines.push(`There is no club yet. Stop the server and make one: ${newClubUsage}`);
   lines.push('Ctrl+C stops it.');
   return lines;
 }
