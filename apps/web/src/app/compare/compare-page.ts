@@ -14,7 +14,7 @@ import { RouterLink } from '@angular/router';
 import { getComparison } from '@stillstroke/contract/comparison';
 import { getSession } from '@stillstroke/contract/sessions';
 import { apiResource } from '../core/api/api';
-import { problemOf } from '../core/api/problem-of';
+import { ProblemMessage } from '../ui/problem-message';
 import { sayComparison } from './comparison-sentence';
 import { MeasureRows } from './measure-rows';
 import { PullCurve } from './pull-curve';
@@ -31,7 +31,16 @@ const leftOutWords = {
 /** Left against right in one session: the sentence, the stills at the same share of the pull, then every measure. */
 @Component({
   selector: 'st-compare-page',
-  imports: [DatePipe, MatSliderModule, MatTabsModule, MeasureRows, PullCurve, PullStill, RouterLink],
+  imports: [
+    DatePipe,
+    MatSliderModule,
+    MatTabsModule,
+    MeasureRows,
+    ProblemMessage,
+    PullCurve,
+    PullStill,
+    RouterLink,
+  ],
   templateUrl: './compare-page.html',
   styleUrl: './compare-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -45,10 +54,6 @@ export class ComparePage {
   /** Share of the pull that both stills show, percent. */
   protected readonly sharePercent = signal(40);
 
-  protected readonly problem = computed(() => {
-    const error = this.comparison.error() ?? this.session.error();
-    return error ? problemOf(error) : null;
-  });
   protected readonly sentence = computed(() => {
     const compared = this.comparison.hasValue() ? this.comparison.value() : undefined;
     return compared && sayComparison(compared.splits);

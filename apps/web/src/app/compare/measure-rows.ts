@@ -27,7 +27,11 @@ export class MeasureRows {
         words: measureWords[row.measure],
         left,
         right,
-        domain: domainOf([left, right], row.unit === 'deg' ? 20 : 10),
+        domain: domainOf(
+          [left, right],
+          row.unit === 'deg' ? 20 : 10,
+          row.measure === 'elbowAtMidPull' ? 180 : Infinity,
+        ),
         suffix: suffixes[row.unit],
         said: sayVerdict(row),
         settled: row.verdict === 'left-larger' || row.verdict === 'right-larger',
@@ -53,14 +57,21 @@ function railValue(row: MeasureComparison, arm: 'left' | 'right'): RailValue | n
 }
 
 /** Both ends of the rail, rounded outwards to the step, with room around what is drawn. */
-function domainOf(values: readonly (RailValue | null)[], step: number): readonly [number, number] {
+function domainOf(
+  values: readonly (RailValue | null)[],
+  step: number,
+  most: number,
+): readonly [number, number] {
   const ends = values.flatMap((value) =>
     value ? [value.value, value.interval?.low ?? value.value, value.interval?.high ?? value.value] : [],
   );
   if (ends.length === 0) return [0, step * 2];
   const low = Math.floor(Math.min(...ends) / step) * step;
   const high = Math.ceil(Math.max(...ends) / step) * step;
-  return low === high ? [low - step, high + step] : [low, high + (((high - low) / step) % 2) * step];
+  if (low === high) return [low - step, Math.min(most, high + step)];
+  // An even number of steps puts the middle tick on a round number; room is added where there is some.
+  const odd = ((high - low) / step) % 2 === 1;
+  return odd && high + step > most ? [low - step, high] : [low, high + (odd ? step : 0)];
 }
 
 function sayMean(row: MeasureComparison, arm: 'left' | 'right'): string {

@@ -4,7 +4,7 @@ import { scaleLinear } from 'd3-scale';
 import { line } from 'd3-shape';
 import type { ComparedStroke } from './pull-stroke';
 
-const frame = { left: 44, right: 388, top: 14, bottom: 236 };
+const frame = { left: 44, right: 388, top: 24, bottom: 240 };
 
 /** The forearm over the pull of every stroke of both arms, marked points as links to their frames, and a plumb as playhead. */
 @Component({

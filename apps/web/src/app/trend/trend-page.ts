@@ -7,7 +7,6 @@ import { getAthlete } from '@stillstroke/contract/athletes';
 import { measureSchema, type Measure } from '@stillstroke/contract/measures';
 import { getTrend } from '@stillstroke/contract/trend';
 import { apiResource } from '../core/api/api';
-import { problemOf } from '../core/api/problem-of';
 import {
   fixed,
   formatDifference,
@@ -16,6 +15,7 @@ import {
   onScreen,
 } from '../ui/figure/format-figure';
 import { measuresInOrder, measureWords } from '../ui/figure/measure-words';
+import { ProblemMessage } from '../ui/problem-message';
 import { TrendChart } from './trend-chart';
 import { sayTrend } from './trend-sentence';
 
@@ -28,7 +28,7 @@ const leftOutWords = {
 /** One measure of one athlete over the sessions. */
 @Component({
   selector: 'st-trend-page',
-  imports: [DatePipe, MatFormFieldModule, MatSelectModule, RouterLink, TrendChart],
+  imports: [DatePipe, MatFormFieldModule, MatSelectModule, ProblemMessage, RouterLink, TrendChart],
   templateUrl: './trend-page.html',
   styleUrl: './trend-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -53,10 +53,6 @@ export class TrendPage {
     name: measureWords[measure].name,
   }));
   protected readonly words = computed(() => measureWords[this.chosen()]);
-  protected readonly problem = computed(() => {
-    const error = this.trend.error() ?? this.athlete.error();
-    return error ? problemOf(error) : null;
-  });
   protected readonly shown = computed(() => (this.trend.hasValue() ? this.trend.value() : null));
   protected readonly sentence = computed(() => {
     const trend = this.shown();
