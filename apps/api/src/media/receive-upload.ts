@@ -104,7 +104,10 @@ class Upload {
       parser.on('error', (error) => reject(parserProblem(error)));
       parser.on('finish', resolve);
       this.req.on('error', () => reject(cutOff()));
-      this.req.on('close', () => reject(cutOff()));
+      // A request also closes when all of it has been read, which may be before the parser is through with it.
+      this.req.on('close', () => {
+        if (!this.req.complete) reject(cutOff());
+      });
       if (this.req.destroyed) reject(cutOff());
       this.req.pipe(parser);
     });
