@@ -8,6 +8,8 @@ import { uploadFieldsSchema, type UploadFields } from '@stillstroke/contract/cli
 import { badRequest } from '../platform/mount';
 import { HttpProblem } from '../platform/problem';
 import { filmName } from './film-name';
+import { cutOff, malformed, tooLarge } from './upload-problems';
+import { UploadWatch } from './upload-watch';
 
 /** What an upload brought. The file lies where it was to be written and is safely on disk. */
 export interface ReceivedFilm {
@@ -23,17 +25,6 @@ export interface ReceivedFilm {
 const limits = { fieldNameSize: 40, fieldSize: 200, fields: 8, files: 2, headerPairs: 20, headerSize: 8192 };
 /** Room in the declared length for what surrounds the file. */
 const ENVELOPE_BYTES = 64 * 1024;
-
-export const malformed = (detail: string) => new HttpProblem(400, 'upload-malformed', detail);
-const cutOff = () =>
-  new HttpProblem(400, 'upload-cut-off', 'The upload ended before the file did. Send it again.');
-
-const tooLarge = (limitBytes: number) =>
-  new HttpProblem(
-    413,
-    'file-too-large',
-    `The file is larger than the ${Math.floor(limitBytes / 1024 ** 2)} MiB that are taken. Cut the clip or export it smaller.`,
-  );
 
 /**
  * Streams a multipart upload to disk: exactly one file in the field `video`, and text fields as the contract names them.
@@ -56,6 +47,7 @@ class Upload {
   private readonly stop = new AbortController();
   private readonly fields = new Map<string, string>();
   private writing: Promise<Omit<ReceivedFilm, 'fields'>> | null = null;
+  private written = false;
 
   constructor(
     private readonly req: IncomingMessage,
@@ -65,8 +57,9 @@ class Upload {
 
   async received(): Promise<ReceivedFilm> {
     const parser = openParser(this.req);
+    const watch = new UploadWatch(this.req, parser);
     try {
-      await this.parsed(parser);
+      await Promise.race([this.parsed(parser), watch.stalled(() => this.writing !== null && !this.written)]);
       const film = await this.writing;
       if (!film) throw malformed('Send the video in the field `video`.');
       return { ...film, fields: checkedFields(this.fields) };
@@ -75,6 +68,8 @@ class Upload {
       this.stop.abort();
       await this.writing?.catch(() => undefined);
       throw error;
+    } finally {
+      watch.end();
     }
   }
 
@@ -90,7 +85,7 @@ class Upload {
           return;
         }
         this.writing = this.write(file, name);
-        this.writing.catch(reject);
+        this.writing.then(() => (this.written = true), reject);
       });
       parser.on('field', (name, value, nameCut, valueCut) => {
         try {
