@@ -10,6 +10,7 @@ import { provideRouter, Router, withComponentInputBinding } from '@angular/route
 import { RouterTestingHarness } from '@angular/router/testing';
 import type { SignedInUser } from '@stillstroke/contract/auth';
 import type { Clip } from '@stillstroke/contract/clip-facts';
+import type { Session } from '@stillstroke/contract/sessions';
 import type { Mark } from '@stillstroke/contract/marks';
 import { afterEach, describe, expect, it } from 'vitest';
 import { Connection } from '../core/connection';
@@ -39,6 +40,20 @@ function saved(mark: DeskMark, version = 1): Mark {
   const facts = { angles: none, uncertaintyDeg: none, plumbAssumed: false, version, updatedAt };
   return { arm, frame, shoulder, elbow, wrist, ...facts };
 }
+
+const testSession: Session = {
+  id: testClip.sessionId,
+  athleteId: testClip.athleteId,
+  athleteName: 'Ines Corrow',
+  squadId: '6a0f7a52-7c57-4a3b-9a5e-0c5f9f1c2d03',
+  squadName: 'Masters squad',
+  date: '2026-11-28',
+  place: null,
+  note: null,
+  clips: [],
+  summary: { strokes: { left: 1, right: 1 }, verticalAt: { left: null, right: null } },
+  deletedAt: null,
+};
 
 const problem = (status: number, code: string, current?: unknown) => ({
   type: 'about:blank',
@@ -98,7 +113,8 @@ describe('DeskPage', () => {
     (await asked('GET', `${clipUrl}/strokes`)).flush({ items: strokes, nextCursor: null });
     const items = marks.map((mark) => saved(mark));
     (await asked('GET', `${clipUrl}/marks`)).flush({ items, nextCursor: null });
-    await until(() => page().querySelector('st-stage .caption') !== null);
+    await until(() => page().querySelector('st-stage .caption strong') !== null);
+    (await asked('GET', `/api/sessions/${clip.sessionId}`)).flush(testSession);
     await settle();
   }
 
@@ -106,10 +122,8 @@ describe('DeskPage', () => {
   const text = (selector: string): string => page().querySelector(selector)?.textContent?.trim() ?? '';
 
   async function settle(): Promise<void> {
-    for (let i = 0; i < 4; i += 1) {
-      await harness.fixture.whenStable();
-      await new Promise(requestAnimationFrame);
-    }
+    // Not until it is stable: a request that a test leaves open would hold it for ever.
+    for (let i = 0; i < 6; i += 1) await new Promise(requestAnimationFrame);
   }
 
   async function until(met: () => boolean): Promise<void> {
@@ -213,13 +227,13 @@ describe('DeskPage', () => {
     begin({ role: 'athlete' });
     await go('?frame=74&arm=right');
     await load();
-    expect(text('.headline')).toContain('70°');
+    expect(text('.headline')).toContain('70.0°');
     const buttons = [...page().querySelectorAll('button')].map((one) => one.textContent.trim());
     for (const tool of ['Undo', 'Next to mark N', 'Set here']) expect(buttons).not.toContain(tool);
     press('Delete');
     press('e');
     await settle();
-    expect(text('.headline')).toContain('70°');
+    expect(text('.headline')).toContain('70.0°');
     expect(page().querySelectorAll('[role="tab"]')).toHaveLength(3);
   });
 
@@ -240,7 +254,7 @@ describe('DeskPage', () => {
     await load();
     click('Marks');
     await until(() => page().querySelectorAll('st-marks-list tbody tr').length === testMarks.length);
-    click('Coordinates of frame 74, right arm');
+    click('Edit frame 74, right arm');
     await until(() => page().querySelector('fieldset') !== null);
     const field = page().querySelector<HTMLInputElement>('[aria-label="wrist, from the left"]');
     if (!field) throw new Error('no field');
@@ -257,7 +271,7 @@ describe('DeskPage', () => {
     await load();
     click('Strokes');
     await until(() => page().querySelectorAll('st-strokes-panel section').length === 2);
-    click('Exit of the First right stroke: set on this frame');
+    click('Set here: Exit, First right stroke');
     await until(() => text('.said').includes('exit has to come after the catch'));
     expect(await pageFindings(page())).toEqual([]);
   });

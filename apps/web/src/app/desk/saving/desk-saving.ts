@@ -1,4 +1,4 @@
-import { computed, DestroyRef, DOCUMENT, effect, inject, Injectable, signal } from '@angular/core';
+import { computed, DestroyRef, DOCUMENT, effect, inject, Injectable, signal, untracked } from '@angular/core';
 import type { SignedInUser } from '@stillstroke/contract/auth';
 import type { Clip } from '@stillstroke/contract/clip-facts';
 import { getClip, getClipFrames } from '@stillstroke/contract/clips';
@@ -36,7 +36,9 @@ export class DeskSaving {
 
   constructor() {
     effect(() => {
-      if (this.connection.online()) this.box()?.retryNow();
+      const [online, box] = [this.connection.online(), this.box()];
+      // Only the network coming back is a reason to try again, not what the trying itself changes.
+      if (online) untracked(() => box?.retryNow());
     });
     const warn = (event: BeforeUnloadEvent) => this.warnBeforeLoss(event);
     this.window?.addEventListener('beforeunload', warn);
