@@ -4,6 +4,7 @@ import { createApp } from '../../app';
 import { demoAccounts } from '../../auth/demo-accounts';
 import { startPurging } from '../../media/purge';
 import { seedDemo } from '../../demo/seed';
+import { refreshOutdatedFigures } from '../../measures/figures';
 import { sweepFilms } from '../../media/sweep';
 import type { AppContext } from '../context';
 import { readSettings, type Settings } from '../settings';
@@ -34,6 +35,7 @@ export async function start(options: StartOptions): Promise<() => Promise<void>>
   const { context, close } = openContext(settings, options.migrationsFolder);
   try {
     await sweepFilms(context);
+    refreshOutdatedFigures(context);
     if (settings.demo) await seedDemo(context);
     const app = createApp(context, { webFolder: options.webFolder });
     const { server, url } = await listen(app, settings);
