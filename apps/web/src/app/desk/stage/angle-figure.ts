@@ -44,8 +44,15 @@ const DIGIT_WIDTH = 0.56;
 
 /**
  * Lays out the angles of an arm; null when its elbow is not on the stage, for then there is nothing to point at.
+ *
+ * @param taken places on the stage that its controls cover, CSS pixels
  */
-export function angleFigure(input: AngleFigureInput, view: ViewTransform, stage: Size): AngleFigure | null {
+export function angleFigure(
+  input: AngleFigureInput,
+  view: ViewTransform,
+  stage: Size,
+  taken: readonly Box[] = [],
+): AngleFigure | null {
   const [shoulder, elbow, wrist] = [input.mark.shoulder, input.mark.elbow, input.mark.wrist].map((point) =>
     toStage(view, asPicturePoint(point)),
   );
@@ -58,8 +65,12 @@ export function angleFigure(input: AngleFigureInput, view: ViewTransform, stage:
   const upward = directionOf(elbow, shoulder);
   const elbowArc = arcBetween(elbow, within(forearmPx * 0.25, 14, 34), upward, directionOf(elbow, wrist));
   const lines: Segment[] = [[shoulder, elbow], [elbow, wrist], plumb];
-  const forearmLabel = label(input.forearmDeg, FOREARM_FONT, forearmArc, { lines, boxes: [], stage });
-  const elbowLabel = label(input.elbowDeg, ELBOW_FONT, elbowArc, { lines, boxes: [forearmLabel.box], stage });
+  const forearmLabel = label(input.forearmDeg, FOREARM_FONT, forearmArc, { lines, boxes: taken, stage });
+  const elbowLabel = label(input.elbowDeg, ELBOW_FONT, elbowArc, {
+    lines,
+    boxes: [...taken, forearmLabel.box],
+    stage,
+  });
   return { plumb, forearmArc, elbowArc, forearmLabel, elbowLabel };
 }
 

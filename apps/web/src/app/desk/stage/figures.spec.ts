@@ -53,6 +53,22 @@ describe('angleFigure', () => {
     expect(Math.atan2((foot?.x ?? 0) - (top?.x ?? 0), (foot?.y ?? 0) - (top?.y ?? 0))).toBeCloseTo(roll, 9);
   });
 
+  it('keeps its numbers off what is taken', () => {
+    const input = { mark, rollDeg: 0, forearmDeg: 45, elbowDeg: 160 };
+    const free = angleFigure(input, plain, stage)?.forearmLabel.box;
+    if (!free) throw new Error('no label');
+    const moved = angleFigure(input, plain, stage, [free]);
+    for (const box of [moved?.forearmLabel.box, moved?.elbowLabel.box]) {
+      const apart = Math.max(
+        (box?.left ?? NaN) - free.left - free.width,
+        free.left - (box?.left ?? NaN) - (box?.width ?? NaN),
+        (box?.top ?? NaN) - free.top - free.height,
+        free.top - (box?.top ?? NaN) - (box?.height ?? NaN),
+      );
+      expect(apart).toBeGreaterThan(0);
+    }
+  });
+
   it('draws nothing for an elbow that is off the stage', () => {
     const input = { mark, rollDeg: 0, forearmDeg: 45, elbowDeg: 160 };
     expect(angleFigure(input, { scale: 8, offsetX: 0, offsetY: 0 }, stage)).toBeNull();

@@ -7,6 +7,7 @@ import { angleNodes } from './angle-nodes';
 import { armFigure, type Joints } from './arm-figure';
 import { armNodes, jointShape } from './arm-nodes';
 import { type Group, Line, type Shape } from './konva-core';
+import type { Box } from './label-place';
 import { plumbFigureNodes } from './plumb-nodes';
 import { asPicturePoint, type PicturePoint, type Size, type StagePoint } from './spaces';
 import type { StageColours } from './stage-colours';
@@ -20,6 +21,8 @@ export interface ScenePlace {
   readonly view: ViewTransform;
   readonly stage: Size;
   readonly colours: StageColours;
+  /** What the stage's own controls cover. */
+  readonly taken: readonly Box[];
 }
 
 export interface RestingScene {
@@ -74,7 +77,12 @@ export function movingNodes(scene: MovingScene, place: ScenePlace): Nodes {
     nodes.push(...armWithTheirs(scene.arm, 'chosen', view, colours, scene.chosenJoint));
     const mark = wholeMark(scene.arm.joints);
     if (mark && scene.angles) {
-      const figure = angleFigure({ mark, rollDeg: rollOf(scene.plumb), ...scene.angles }, view, stage);
+      const figure = angleFigure(
+        { mark, rollDeg: rollOf(scene.plumb), ...scene.angles },
+        view,
+        stage,
+        place.taken,
+      );
       // Under the arm, so that the joints can be seen and the line stays the arm's.
       if (figure) nodes.unshift(angleNodes(figure, colours));
     }

@@ -62,7 +62,8 @@ export function drawLoupe(model: StageModel, element: HTMLCanvasElement): void {
 
 function scenePlace(model: StageModel): ScenePlace | null {
   const [colours, stage] = [model.colours(), model.size()];
-  return colours && stage.width > 0 ? { view: model.controller.view(), stage, colours } : null;
+  if (!colours || stage.width === 0) return null;
+  return { view: model.controller.view(), stage, colours, taken: model.taken() };
 }
 
 /** Gives a canvas one pixel of its own for every device pixel. */

@@ -3,6 +3,7 @@ import type { DeskState } from '../state/desk-state';
 import type { ClipFrames } from './clip-frames';
 import { ClipPlayer } from './clip-player';
 import { DeskStage, type TheirMark } from './desk-stage';
+import type { Box } from './label-place';
 import { loupePlace, loupeScale } from './loupe';
 import { PictureCanvas } from './picture-canvas';
 import { asPicturePoint, type PicturePoint, type Size, type StagePoint } from './spaces';
@@ -26,6 +27,8 @@ export class StageModel {
   readonly size = signal<Size>({ width: 0, height: 0 });
   /** Device pixels per CSS pixel. */
   readonly ratio = signal(1);
+  /** Places on the stage that its own controls cover, CSS pixels; no number is drawn there. */
+  readonly taken = signal<readonly Box[]>([]);
   readonly colours = signal<StageColours | null>(null);
   /** The keyboard placed or moved last, not a pointer. */
   readonly keyboardAims = signal(false);

@@ -5,6 +5,7 @@ import type { DeskState } from '../state/desk-state';
 import { bareDesk, deskState, testMarks } from '../state/testing';
 import { ClipOpener } from './clip-frames';
 import { asPicturePoint, picturePoint, type PicturePoint } from './spaces';
+import type { TheirMark } from './desk-stage';
 import { Stage } from './stage';
 import { StageController } from './stage-controller';
 import { stageProviders } from './stage-providers';
@@ -14,12 +15,15 @@ import { toStage } from './view-transform';
 @Component({
   selector: 'st-stage-host',
   imports: [Stage],
-  template: `<div style="width: 800px; height: 450px"><st-stage [state]="state()" /></div>`,
+  template: `<div style="width: 800px; height: 450px">
+    <st-stage [state]="state()" [theirs]="theirs()" />
+  </div>`,
   providers: [stageProviders],
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 class StageHost {
   readonly state = signal<DeskState>(bareDesk());
+  readonly theirs = signal<readonly TheirMark[]>([]);
 }
 
 let fixture: ComponentFixture<StageHost>;
@@ -324,6 +328,41 @@ describe('dragging a joint', () => {
     fire('pointermove', moved);
     fire('pointerup', moved);
     expect(fixture.componentInstance.state().markAt('right', 84)?.elbow).toEqual(mark?.elbow);
+  });
+});
+
+describe('beside the mark', () => {
+  it('draws what someone else saved meanwhile, and says so', async () => {
+    const desk = deskState();
+    await show(desk);
+    desk.goTo(84);
+    desk.chooseArm('right');
+    await settle();
+    const wrist = picturePoint(400, 500);
+    expect(drawnAt(1, wrist)[3]).toBe(0);
+    const own = desk.markAt('right', 84);
+    if (!own?.shoulder || !own.elbow) throw new Error('no mark');
+    const { shoulder, elbow } = own;
+    fixture.componentInstance.theirs.set([{ arm: 'right', frame: 84, shoulder, elbow, wrist }]);
+    await settle();
+    expect(drawnAt(1, wrist)[3]).toBeGreaterThan(100);
+    expect(element('.words').textContent).toContain('Someone else marked it differently');
+  });
+
+  it('draws the same arm on its neighbours faintly while that is wanted', async () => {
+    const desk = deskState();
+    await show(desk);
+    desk.goTo(84);
+    desk.chooseArm('right');
+    await settle();
+    const neighbour = asPicturePoint(desk.markAt('right', 89)?.wrist ?? { x: NaN, y: NaN });
+    expect(drawnAt(0, neighbour)[3]).toBe(0);
+    controller.toggleTrail();
+    await settle();
+    const [, , , faint] = drawnAt(0, neighbour);
+    expect(faint).toBeGreaterThan(40);
+    expect(faint).toBeLessThan(200);
+    expect(desk.undoWords()).toBeNull();
   });
 });
 

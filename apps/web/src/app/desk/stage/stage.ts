@@ -15,6 +15,7 @@ import {
 import type { DeskState } from '../state/desk-state';
 import { ClipFrames } from './clip-frames';
 import type { TheirMark } from './desk-stage';
+import type { Box } from './label-place';
 import { MarkSurface } from './mark-surface';
 import { feedPointers } from './pointer-feed';
 import { stageColours } from './stage-colours';
@@ -26,6 +27,7 @@ import { PlumbEnds } from './plumb-ends';
 import { stageWords, troubleTitle } from './stage-words';
 
 let stagesMade = 0;
+const CAPTION_WIDTH = 230;
 
 /**
  * The picture with the marks on it. Signals in, drawing out: pointers and frames only write signals, and every drawing
@@ -190,11 +192,21 @@ export class Stage {
     };
   }
 
+  /** The caption's words change, its place does not: it is taken at its usual width. */
+  private boxOf(part: Element): Box {
+    const [own, host] = [part.getBoundingClientRect(), this.host.getBoundingClientRect()];
+    const width = Math.max(own.width, part.matches('.caption') ? CAPTION_WIDTH : 0);
+    return { left: own.left - host.left, top: own.top - host.top, width, height: own.height };
+  }
+
   /** Follows the stage's size, and the device's pixels when the window moves to another screen. */
   private measure(): () => void {
     const read = () => {
       this.model.ratio.set(window.devicePixelRatio || 1);
       this.model.size.set({ width: this.host.clientWidth, height: this.host.clientHeight });
+      this.model.taken.set(
+        [...this.host.querySelectorAll('.caption, .zoom')].map((part) => this.boxOf(part)),
+      );
     };
     const observer = new ResizeObserver(read);
     observer.observe(this.host);
