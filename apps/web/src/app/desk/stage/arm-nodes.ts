@@ -62,6 +62,7 @@ function jointNodes(
     stroke: colour,
     strokeWidth: figure.weight === 'trail' ? 1 : 2,
   });
+  if (figure.weight === 'trail') return [shape];
   if (!chosen) return [casing, shape];
   const ring = { stroke: colours.plumb, strokeWidth: 1.5 };
   return [casing, jointShape(figure, at, radius + 4, ring), shape];

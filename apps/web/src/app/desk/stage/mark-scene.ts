@@ -34,8 +34,8 @@ export interface RestingScene {
   readonly plumb: PlumbLine | null;
 }
 
-/** Opacity of the nearest and of each further neighbour. */
-const TRAIL_OPACITY = [0.5, 0.38, 0.28, 0.2];
+/** Opacity of the nearest and of each further neighbour; line, casing and joint lie over each other and add up. */
+const TRAIL_OPACITY = [0.35, 0.28, 0.22, 0.16];
 
 /** What does not move while a joint of the chosen arm is dragged. */
 export function restingNodes(scene: RestingScene, { view, stage, colours }: ScenePlace): Nodes {
