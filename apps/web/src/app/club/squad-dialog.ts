@@ -32,7 +32,7 @@ import { problemOf } from '../core/api/problem-of';
             <mat-error>Give a name.</mat-error>
           }
         </mat-form-field>
-        <mat-form-field appearance="outline">
+        <mat-form-field appearance="outline" subscriptSizing="dynamic">
           <mat-label>Coaches</mat-label>
           <mat-select formControlName="coachIds" multiple>
             @for (coach of coaches(); track coach.id) {

@@ -78,7 +78,7 @@ describe('SessionPage', () => {
     await choose('notes.txt');
     await test.refuse('POST', `${call}/clips`, 422, 'not-a-video');
     expect(test.text).toContain('Refused: not-a-video.');
-    test.press('Send notes.txt again');
+    test.press('Send again: notes.txt');
     await test.request('POST', `${call}/clips`);
   });
 
