@@ -266,6 +266,16 @@ describe('Outbox', () => {
     expect(await line.store.list('coach:clip')).toHaveLength(2);
   });
 
+  it('goes on after a right was given back, when the person asks for it', async () => {
+    const line = freshLine();
+    const box = keep(line.box());
+    box.add([put(null, mark(7))]);
+    await line.answer(0, { kind: 'stopped', why: 'forbidden' });
+    box.retryNow();
+    await line.answer(1, done(1));
+    expect(box.state().kind).toBe('saved');
+  });
+
   it('says so when the device keeps nothing, and still sends', async () => {
     const line = freshLine();
     line.store.put = () => Promise.reject(new Error('quota'));

@@ -89,7 +89,7 @@ export class Outbox {
   retryNow(): void {
     this.callOff?.();
     this.callOff = null;
-    if (this.stop() === 'signed-out') this.stop.set(null);
+    if (this.stop() !== 'gone') this.stop.set(null);
     this.pump();
   }
 
