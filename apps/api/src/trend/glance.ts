@@ -13,8 +13,9 @@ type Glance = Athlete['verticalAt'];
  */
 export function verticalAtGlance(db: Db, athleteIds: readonly string[]): Map<string, Glance> {
   const newest = new Map<string, string>();
+  const query = newestMeasured(db);
   for (const athleteId of athleteIds) {
-    const sessionId = newestMeasured(db, athleteId);
+    const sessionId = query.get({ athleteId })?.id;
     if (sessionId !== undefined) newest.set(athleteId, sessionId);
   }
   const summaries = sessionSummaries(db, [...newest.values()]);
@@ -27,13 +28,13 @@ export function verticalAtGlance(db: Db, athleteIds: readonly string[]): Map<str
 }
 
 /** Walks back from the newest session, so that it does not matter how many there are. */
-function newestMeasured(db: Db, athleteId: string): string | undefined {
+function newestMeasured(db: Db) {
   return db
     .select({ id: sessions.id })
     .from(sessions)
     .where(
       and(
-        eq(sessions.athleteId, athleteId),
+        eq(sessions.athleteId, sql.placeholder('athleteId')),
         isNull(sessions.deletedAt),
         exists(
           db
@@ -53,5 +54,5 @@ function newestMeasured(db: Db, athleteId: string): string | undefined {
     )
     .orderBy(desc(sessions.date), desc(sessions.createdAt))
     .limit(1)
-    .get()?.id;
+    .prepare();
 }
