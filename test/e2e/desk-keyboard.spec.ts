@@ -14,7 +14,7 @@ test('the Desk works with the keyboard alone', async ({ page }) => {
   });
   await page.goto(`/sessions/${(body as { id: string }).id}`);
   await page.locator('st-upload-panel input[type=file]').setInputFiles(laneFour);
-  const open = page.getByRole('link', { name: 'Open on the Desk' });
+  const open = page.locator('st-clip-card').getByRole('link', { name: 'Open on the Desk' });
   await expect(open).toBeVisible({ timeout: 60_000 });
   await open.focus();
   await page.keyboard.press('Enter');

@@ -1,4 +1,3 @@
-import { NgTemplateOutlet } from '@angular/common';
 import { ChangeDetectionStrategy, Component, computed, input, signal } from '@angular/core';
 import type { Joint } from '@stillstroke/geometry/arm';
 import { formatFigure } from '../../ui/figure/format-figure';
@@ -9,7 +8,6 @@ import { capital } from '../state/marking';
 /** Every mark as a table: what the canvas draws, to be read, corrected, gone to and removed without it. */
 @Component({
   selector: 'st-marks-list',
-  imports: [NgTemplateOutlet],
   templateUrl: './marks-list.html',
   styleUrl: './marks-list.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -28,11 +26,17 @@ export class MarksList {
       .sort((a, b) => a.frame - b.frame || a.arm.localeCompare(b.arm))
       .map((mark) => ({ mark, key: markKey(mark.arm, mark.frame), figures: this.figures(mark) }));
   });
-  /** The shown frame and arm, when it is to be marked by numbers and has no row yet. */
-  protected readonly fresh = computed<DeskMark | null>(() => {
+  /**
+   * The mark whose coordinates are open, there or yet to be. The fields stand in one place whichever it is, so that the
+   * focus stays in them when the first coordinate makes the mark.
+   */
+  protected readonly edited = computed<DeskMark | null>(() => {
+    const key = this.editing();
+    if (key === null) return null;
+    const known = this.state().marks().get(key);
+    if (known) return known;
     const [arm, frame] = [this.state().arm(), this.state().frame()];
-    const key = markKey(arm, frame);
-    if (this.editing() !== key || this.state().marks().has(key)) return null;
+    if (markKey(arm, frame) !== key) return null;
     return { arm, frame, shoulder: null, elbow: null, wrist: null };
   });
 
