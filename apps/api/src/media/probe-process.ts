@@ -3,7 +3,7 @@ import { ClipRefusal } from '@stillstroke/clip-index/clip-refusal';
 import { readClipIndex } from '@stillstroke/clip-index/frame-index';
 import { FilePathSource, Input } from 'mediabunny';
 import { writePoster } from './poster';
-import type { ProbeAnswer, ProbeQuestion } from './probe-protocol';
+import type { ProbeAnswer, ProbeQuestion, ProbeReady } from './probe-protocol';
 
 /**
  * The process that looks into files. A file made to crash or stall a reader takes this process down and not the server,
@@ -28,3 +28,4 @@ process.on('message', (question: ProbeQuestion) => {
 });
 // Without the server there is nobody to answer.
 process.on('disconnect', () => process.exit(0));
+process.send?.({ kind: 'ready' } satisfies ProbeReady);

@@ -12,3 +12,8 @@ export type ProbeAnswer =
   | { readonly kind: 'poster' }
   | { readonly kind: 'refused'; readonly code: ClipRefusalCode; readonly message: string }
   | { readonly kind: 'failed'; readonly message: string };
+
+/** Said once when the process has loaded. */
+export interface ProbeReady {
+  readonly kind: 'ready';
+}

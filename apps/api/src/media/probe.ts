@@ -1,10 +1,12 @@
 import { fork, type ChildProcess } from 'node:child_process';
 import { createRequire } from 'node:module';
 import { fileURLToPath, pathToFileURL } from 'node:url';
-import type { ProbeAnswer, ProbeQuestion } from './probe-protocol';
+import type { ProbeAnswer, ProbeQuestion, ProbeReady } from './probe-protocol';
 
 /** A process that nobody asked for this long ends. */
 const IDLE_MS = 30_000;
+/** Loading the decoders takes a moment, on a busy machine a long one; it is not the film's fault. */
+const START_MS = 60_000;
 /** JavaScript heap of the process; a forged table that wants more takes down the process alone. */
 const HEAP_MB = 768;
 
@@ -17,7 +19,7 @@ export class Probe {
   private queue: Promise<unknown> = Promise.resolve();
   private idle: NodeJS.Timeout | undefined;
 
-  /** @param timeLimitMs after which a question counts as failed and the process is ended */
+  /** @param timeLimitMs after which, the process once loaded, a question counts as failed and the process is ended */
   ask(question: ProbeQuestion, timeLimitMs: number): Promise<ProbeAnswer> {
     const turn = this.queue.then(() => this.askNow(question, timeLimitMs));
     this.queue = turn;
@@ -33,21 +35,26 @@ export class Probe {
 
   private askNow(question: ProbeQuestion, timeLimitMs: number): Promise<ProbeAnswer> {
     clearTimeout(this.idle);
+    const fresh = this.child === null;
     const child = (this.child ??= startProcess());
     keepAlive(child, true);
     return new Promise<ProbeAnswer>((resolve) => {
       const settle = (answer: ProbeAnswer, usable: boolean): void => {
-        clearTimeout(late);
+        late.stop();
         child.off('message', onMessage).off('exit', onExit).off('error', onError);
         if (usable) this.rest(child);
         else this.close();
         resolve(answer);
       };
-      const onMessage = (answer: ProbeAnswer): void => settle(answer, true);
+      const onMessage = (answer: ProbeAnswer | ProbeReady): void => {
+        if (answer.kind === 'ready') late.start(timeLimitMs);
+        else settle(answer, true);
+      };
       const onExit = (code: number | null, signal: string | null): void =>
         settle({ kind: 'failed', message: `the process ended (${signal ?? code})` }, false);
       const onError = (error: Error): void => settle({ kind: 'failed', message: error.message }, false);
-      const late = setTimeout(() => settle({ kind: 'failed', message: 'took too long' }, false), timeLimitMs);
+      const late = new Deadline(() => settle({ kind: 'failed', message: 'took too long' }, false));
+      late.start(fresh ? START_MS : timeLimitMs);
       child.on('message', onMessage).on('exit', onExit).on('error', onError);
       child.send(question, (error) => {
         if (error) onError(error);
@@ -60,6 +67,22 @@ export class Probe {
     keepAlive(child, false);
     this.idle = setTimeout(() => this.close(), IDLE_MS);
     this.idle.unref();
+  }
+}
+
+/** A timer that can be set anew. */
+class Deadline {
+  private timer: NodeJS.Timeout | undefined;
+
+  constructor(private readonly passed: () => void) {}
+
+  start(inMs: number): void {
+    this.stop();
+    this.timer = setTimeout(this.passed, inMs);
+  }
+
+  stop(): void {
+    clearTimeout(this.timer);
   }
 }
 

@@ -1,4 +1,4 @@
-import { existsSync } from 'node:fs';
+import { existsSync, statSync } from 'node:fs';
 import type { ClipRefusalCode } from '@stillstroke/clip-index/clip-refusal';
 import type { ClipIndex } from '@stillstroke/clip-index/frame-index';
 import type { ProblemCode } from '@stillstroke/contract/problem';
@@ -9,9 +9,10 @@ import { Probe } from './probe';
 
 type Limits = Settings['limits'];
 
-/** A long variable-rate film takes seconds; what takes longer is made to. */
-const INDEX_TIME_LIMIT_MS = 90_000;
-const POSTER_TIME_LIMIT_MS = 45_000;
+/** Reading a container's tables goes faster than this; what takes longer is made to, or lies on a failing disk. */
+const BYTES_PER_MS = 10_000;
+const LEAST_INDEX_MS = 10_000;
+const POSTER_MS = 30_000;
 
 /** Codecs that every browser with WebCodecs shows, by the names of the frame index. */
 const shownEverywhere = new Set(['avc', 'vp8', 'vp9', 'av1']);
@@ -37,7 +38,9 @@ function probe(): Probe {
  * @throws HttpProblem that says why the file cannot become a clip and what to do
  */
 export async function recogniseFilm(folder: string, limits: Limits): Promise<ClipIndex> {
-  const answer = await probe().ask({ kind: 'index', film: filmPath(folder) }, INDEX_TIME_LIMIT_MS);
+  const film = filmPath(folder);
+  const limitMs = LEAST_INDEX_MS + statSync(film).size / BYTES_PER_MS;
+  const answer = await probe().ask({ kind: 'index', film }, limitMs);
   if (answer.kind === 'refused') throw refusal(refusedAs[answer.code], answer.message);
   if (answer.kind !== 'index') {
     throw refusal('unreadable-video', 'The file cannot be read as a video. Copy it again from the camera.');
@@ -95,7 +98,7 @@ export async function makePoster(folder: string, index: ClipIndex): Promise<bool
       width: index.width,
       height: index.height,
     },
-    POSTER_TIME_LIMIT_MS,
+    POSTER_MS,
   );
   return answer.kind === 'poster' && existsSync(poster);
 }
