@@ -129,15 +129,18 @@ test('a coach measures a clip that came from a camera, and it changes what the p
       await desk.goTo(frame);
       await page.getByRole('button', { name: `Frame ${frame}, left arm, by numbers` }).focus();
       await page.keyboard.press('Enter');
+      await expect(page.locator('st-marks-list legend')).toContainText(`frame ${frame},`);
       const known = trueMark('left', frame);
       for (const joint of ['shoulder', 'elbow', 'wrist'] as const) {
-        for (const [side, value] of [
-          ['from the left', known[joint].x],
-          ['from above', known[joint].y],
-        ] as const) {
-          await page.getByLabel(`${joint}, ${side}`).first().fill(String(value));
-          await page.keyboard.press('Tab');
-        }
+        const fields = (['from the left', 'from above'] as const).map((side) =>
+          page.getByLabel(`${joint}, ${side}`),
+        );
+        await fields[0]?.fill(String(known[joint].x));
+        await page.keyboard.press('Tab');
+        // The first coordinate puts the joint down; its partner then shows where.
+        await expect(fields[1] ?? page.locator('body')).not.toHaveValue('');
+        await fields[1]?.fill(String(known[joint].y));
+        await page.keyboard.press('Tab');
       }
       await desk.saved();
     }

@@ -66,7 +66,11 @@ export class DeskHands {
     await this.page.getByRole('tab', { name }).click();
   }
 
+  /** All that was done is acknowledged. The words follow a change with the next drawing of the page, hence the two frames. */
   async saved(): Promise<void> {
+    await this.page.evaluate(
+      () => new Promise((drawn) => requestAnimationFrame(() => requestAnimationFrame(drawn))),
+    );
     await expect(this.page.locator('st-desk-bar .save')).toContainText(/saved/i);
   }
 }

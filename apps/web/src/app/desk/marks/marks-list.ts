@@ -62,7 +62,9 @@ export class MarksList {
     const field = event.target as HTMLInputElement;
     const value = field.valueAsNumber;
     if (!Number.isFinite(value)) return;
-    const point = mark[joint] ?? this.state().marking.crosshairOrMiddle();
+    // As it is now: the partner may have been typed since the fields were last drawn.
+    const known = this.state().marks().get(markKey(mark.arm, mark.frame));
+    const point = known?.[joint] ?? this.state().marking.crosshairOrMiddle();
     this.state().marking.moveJoint(mark.arm, mark.frame, joint, { ...point, [axis]: value }, 'type-joint');
   }
 
