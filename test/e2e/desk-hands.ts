@@ -31,6 +31,10 @@ export class DeskHands {
     await expect(this.stage.locator('.caption strong')).toHaveText(`Frame ${frame}`, { timeout: 30_000 });
   }
 
+  async leaves(frame: number): Promise<void> {
+    await expect(this.stage.locator('.caption strong')).not.toHaveText(`Frame ${frame}`);
+  }
+
   async choose(arm: Arm): Promise<void> {
     await this.page.keyboard.press(arm === 'left' ? '1' : '2');
   }
