@@ -46,6 +46,17 @@ describe('the sentence of a comparison', () => {
     ).toBe('about 14 more strokes a side would settle 1 point');
   });
 
+  it('says why an interval off zero is no difference yet: several measures were looked at', () => {
+    const push = row({
+      verdict: 'not-distinguishable',
+      difference: 0.015,
+      interval: { low: 0.003, high: 0.028 },
+    });
+    expect(sayVerdict(push).detail).toBe('0.3 to 2.8; among so many measures one such comes by chance');
+    const none = row({ verdict: 'not-distinguishable', difference: 0, interval: { low: -0.02, high: 0.02 } });
+    expect(sayVerdict(none).detail).toBe('−2 to 2');
+  });
+
   it('says how many strokes are missing', () => {
     expect(sayComparison(splits([])).headline).toBe('Nothing to compare yet');
     const few = row({ verdict: 'too-few', left: { ...nobody, count: 2 }, right: { ...nobody, count: 1 } });

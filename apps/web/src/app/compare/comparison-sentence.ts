@@ -81,7 +81,12 @@ export function sayVerdict(row: MeasureComparison): { verdict: string; detail: s
 }
 
 function sayMore(row: MeasureComparison, amount: string): string {
-  if (row.moreStrokes === null) return row.interval ? `${formatInterval(row.interval, row.unit)}` : '';
+  if (row.moreStrokes === null) {
+    if (!row.interval) return '';
+    const crosses = row.interval.low <= 0 && row.interval.high >= 0;
+    const range = formatInterval(row.interval, row.unit);
+    return crosses ? range : `${range}; among so many measures one such comes by chance`;
+  }
   return row.moreStrokes > 200
     ? `${amount} apart; no reasonable number of strokes would settle it`
     : `about ${row.moreStrokes} more ${row.moreStrokes === 1 ? 'stroke' : 'strokes'} a side would settle ${amount}`;
