@@ -12,7 +12,6 @@ import {
   signal,
   viewChild,
 } from '@angular/core';
-import { MatIconButton } from '@angular/material/button';
 import { paintStrip, type StripColours } from './strip-paint';
 import { layOut, timeAt, xOf, type StripMark, type StripStroke } from './strip-scene';
 import {
@@ -31,7 +30,6 @@ import {
  */
 @Component({
   selector: 'st-strip',
-  imports: [MatIconButton],
   templateUrl: './strip.html',
   styleUrl: './strip.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
