@@ -15,10 +15,26 @@ export class Transport {
 
   protected readonly speeds = speeds;
   protected readonly lastFrame = computed(() => this.state().frameTimesUs().length - 1);
+  /** Each button stops what it started, and stays in place, so that it keeps the focus. */
+  protected readonly ways = [
+    { direction: -1, name: 'Play back' },
+    { direction: 1, name: 'Play' },
+  ] as const;
   protected readonly arms = [
     { arm: 'left', name: 'Left arm', key: '1' },
     { arm: 'right', name: 'Right arm', key: '2' },
   ] as const;
+
+  protected plays(direction: 1 | -1): boolean {
+    const { play } = this.state();
+    return play.playing() && play.direction() === direction;
+  }
+
+  protected playOrStop(direction: 1 | -1): void {
+    const { play } = this.state();
+    if (this.plays(direction)) play.stop();
+    else play.start(direction);
+  }
 
   protected chooseSpeed(event: Event): void {
     this.state().play.setSpeed(Number((event.target as HTMLSelectElement).value) as Speed);
