@@ -1,9 +1,11 @@
+import { once } from 'node:events';
 import { readFileSync, writeFileSync } from 'node:fs';
+import { type AddressInfo, connect } from 'node:net';
 import { join } from 'node:path';
 import type { Clip } from '@stillstroke/contract/clip-facts';
 import { clips } from '@stillstroke/db/schema/film';
 import { eq } from 'drizzle-orm';
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import type { TestBrowser } from '../platform/test-browser';
 import { openTestClub, type TestClub } from '../platform/test-club';
 import { clipFolder, dropFolder, filmPath, posterPath } from './clip-store';
@@ -66,6 +68,27 @@ describe('the film of a clip', () => {
       expect(answer.headers['content-range']).toBe(`bytes ${from}-${to - 1}/1000`);
       expect((answer.body as Buffer).equals(bytes.subarray(from, to))).toBe(true);
     }
+  });
+
+  it('left before its first byte is no fault of the server', async () => {
+    const failed = vi.spyOn(club.context.log, 'error');
+    const server = club.app.listen(0);
+    await once(server, 'listening');
+    const { port } = server.address() as AddressInfo;
+    const cookie = `stillstroke=${coach.cookie('stillstroke') ?? ''}`;
+    for (let turn = 0; turn < 20; turn++) {
+      const reader = connect(port, '127.0.0.1');
+      await once(reader, 'connect');
+      const lines = [`GET /api/clips/${clip.id}/media HTTP/1.1`, 'Host: pool', `Cookie: ${cookie}`, '', ''];
+      const received = once(server, 'request');
+      reader.write(lines.join('\r\n'));
+      await received;
+      reader.destroy();
+      await once(reader, 'close');
+    }
+    server.close();
+    await once(server, 'close');
+    expect(failed).not.toHaveBeenCalled();
   });
 
   it('refuses a range beyond its end, saying how long it is', async () => {

@@ -46,11 +46,16 @@ function send(settings: Settings, clipId: string, file: string, res: Response): 
       // The tag is of the content: a date would change when the data folder is copied.
       { root: clipFolder(settings, clipId), cacheControl: false, lastModified: false },
       (error?: Error) => {
-        if (!error || res.headersSent) resolve();
+        // A browser leaves a film half read whenever it jumps or goes to another page: no fault, and nobody to tell.
+        if (!error || res.headersSent || isAborted(error)) resolve();
         else reject(problemOf(error, res));
       },
     );
   });
+}
+
+function isAborted(error: Error): boolean {
+  return (error as NodeJS.ErrnoException).code === 'ECONNABORTED';
 }
 
 function problemOf(error: Error, res: Response): Error {
