@@ -3,6 +3,7 @@ import * as athletes from './athletes';
 import * as auth from './auth';
 import * as clips from './clips';
 import * as comparison from './comparison';
+import * as explanation from './explanation';
 import * as health from './health';
 import * as marks from './marks';
 import * as measures from './measures';
@@ -31,6 +32,7 @@ export const surface: readonly Endpoint[] = [
   strokes,
   marks,
   measures,
+  explanation,
   comparison,
   trend,
 ].flatMap((file) => Object.values(file).filter(isEndpoint));

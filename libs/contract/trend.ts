@@ -1,8 +1,12 @@
 import * as z from 'zod';
+import { strokeKindSchema } from './clip-facts';
 import { endpoint, type AnswerOf } from './endpoint';
 import { dateSchema, frameSchema, idParams, idSchema } from './fields';
 import { measureSchema, unitSchema } from './measures';
 import { armSchema } from './strokes';
+
+/** Views in which the arm's angles mean what their definitions say. */
+export const sideViewSchema = z.enum(['side-underwater', 'side-above']);
 
 /** `not-more-than-strokes-vary`: more than marking could produce, yet within what the strokes of a session differ among themselves. */
 export const changeVerdictSchema = z.enum([
@@ -21,6 +25,12 @@ export const trendPointSchema = z.strictObject({
   mean: z.number(),
   uncertainty: z.number(),
   count: z.int(),
+  /** Between the strokes, divisor n − 1; null for one stroke. */
+  sd: z.number().nullable(),
+  /** The part of the uncertainty that marking and set-up alone would leave. */
+  marking: z.number(),
+  /** The part that all strokes of the session share (the camera's lean). */
+  setUp: z.number(),
   frames: z.array(z.strictObject({ clipId: idSchema, frame: frameSchema })),
 });
 export type TrendPoint = z.infer<typeof trendPointSchema>;
@@ -30,12 +40,26 @@ export const armTrendSchema = z.strictObject({
   points: z.array(trendPointSchema),
   /** Last minus first session. */
   change: z.number().nullable(),
+  /** 95 % interval of the change; null below three strokes in either session. */
+  interval: z.strictObject({ low: z.number(), high: z.number() }).nullable(),
+  /** Welch's standard error and quantile behind the interval; null without one, or where all strokes are equal. */
+  welch: z
+    .strictObject({ standardError: z.number(), degreesOfFreedom: z.number(), quantile: z.number() })
+    .nullable(),
   /** Smallest change that marking could not produce (95 %). */
   detectable: z.number().nullable(),
   verdict: changeVerdictSchema,
   /** Per 30 days, only from four sessions on. */
   slope: z
-    .strictObject({ value: z.number(), low: z.number(), high: z.number(), robust: z.number() })
+    .strictObject({
+      value: z.number(),
+      low: z.number(),
+      high: z.number(),
+      robust: z.number(),
+      /** Standard error from the scatter about the line, and what the sessions' own uncertainties would leave. */
+      scatter: z.number(),
+      known: z.number().nullable(),
+    })
     .nullable(),
 });
 
@@ -45,18 +69,26 @@ export const getTrend = endpoint({
   access: ['admin', 'coach', 'athlete'],
   summary: 'One measure over the sessions, each arm',
   params: idParams,
-  query: z.strictObject({ measure: measureSchema.default('verticalAt') }),
+  /** Without `view` the one under water where there is one. Only one view and stroke kind at a time: they are never mixed. */
+  query: z.strictObject({
+    measure: measureSchema.default('verticalAt'),
+    view: sideViewSchema.optional(),
+    stroke: strokeKindSchema.default('full'),
+  }),
   answer: z.strictObject({
     athleteId: idSchema,
     measure: measureSchema,
     unit: unitSchema,
-    view: z.string(),
+    view: sideViewSchema,
+    stroke: strokeKindSchema,
+    /** Every view and stroke kind with this measure, with the number of its sessions: what can be chosen. */
+    series: z.array(z.strictObject({ view: sideViewSchema, stroke: strokeKindSchema, sessions: z.int() })),
     arms: z.array(armTrendSchema),
     leftOut: z.array(
       z.strictObject({
         sessionId: idSchema,
         date: dateSchema,
-        reason: z.enum(['other-view', 'drill', 'not-measured']),
+        reason: z.enum(['other-view', 'drill', 'full-stroke', 'not-measured']),
       }),
     ),
   }),

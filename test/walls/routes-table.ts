@@ -257,6 +257,12 @@ export const routes: readonly RouteRow[] = [
   },
   { route: 'patch /api/strokes/:id', path: stroke, body: () => ({ breath: true }), statuses: change(200) },
   { route: 'delete /api/strokes/:id', path: stroke, statuses: change(204) },
+  {
+    route: 'get /api/strokes/:id/explanation',
+    path: (things) => `${stroke(things)}/explanation`,
+    query: '?measure=verticalAt',
+    statuses: read,
+  },
 
   { route: 'get /api/clips/:id/marks', path: (things) => `${clip(things)}/marks`, statuses: read },
   {

@@ -2,6 +2,7 @@ import type { Router } from 'express';
 import { athletesRoutes } from './athletes/athletes.routes';
 import { clipsRoutes } from './clips/clips.routes';
 import { comparisonRoutes } from './comparison/comparison.routes';
+import { explanationsRoutes } from './explanations/explanations.routes';
 import { invitationsRoutes } from './invitations/invitations.routes';
 import { marksRoutes } from './marks/marks.routes';
 import { measuresRoutes } from './measures/measures.routes';
@@ -25,6 +26,7 @@ export const routers: readonly RouterFactory[] = [
   strokesRoutes,
   marksRoutes,
   measuresRoutes,
+  explanationsRoutes,
   comparisonRoutes,
   trendRoutes,
 ];

@@ -23,6 +23,10 @@ export interface ArmComparison {
    * when unknown or when no reasonable number would do.
    */
   readonly moreStrokes: number | null;
+  /** The strokes' own test behind the interval; null with too few strokes, or when no stroke differs from another. */
+  readonly welch: MeanDifference | null;
+  /** Standard uncertainty of the difference from marking (and what all strokes share) alone; null with too few strokes. */
+  readonly marking: number | null;
 }
 
 export interface ComparisonOptions {
@@ -67,7 +71,15 @@ export function compareArms(
 type Judged = Omit<ArmComparison, 'left' | 'right'>;
 
 function tooFew(difference: number | null): Judged {
-  return { difference, interval: null, p: null, verdict: 'too-few', moreStrokes: null };
+  return {
+    difference,
+    interval: null,
+    p: null,
+    verdict: 'too-few',
+    moreStrokes: null,
+    welch: null,
+    marking: null,
+  };
 }
 
 function compared(left: SampleSummary, right: SampleSummary, marking: number, common: number): Judged {
@@ -86,6 +98,8 @@ function compared(left: SampleSummary, right: SampleSummary, marking: number, co
     p,
     verdict,
     moreStrokes: settled ? 0 : strokesToSettle({ difference, left, right, marking, common }),
+    welch: strokes.ok ? strokes.value : null,
+    marking,
   };
 }
 
@@ -99,12 +113,12 @@ function halfWidth({ interval }: MeanDifference): number {
   return (interval.high - interval.low) / 2;
 }
 
-function twoSided(z: number): number {
+export function twoSided(z: number): number {
   return 2 * normalBelow(-Math.abs(z));
 }
 
 /** Standard uncertainty of a mean from marking alone. */
-function markingOfMean(marking: number | readonly number[] | undefined, count: number): number {
+export function markingOfMean(marking: number | readonly number[] | undefined, count: number): number {
   if (marking === undefined || count === 0) return 0;
   const each = typeof marking === 'number' ? [marking] : marking;
   if (each.length === 0) return 0;

@@ -17,8 +17,9 @@ export function pairedDifference(
   const standard = sd / Math.sqrt(count);
   const degreesOfFreedom = count - 1;
   const t = difference / standard;
-  const half = t95(degreesOfFreedom) * standard;
+  const quantile = t95(degreesOfFreedom);
+  const half = quantile * standard;
   const p = 2 * studentBelow(-Math.abs(t), degreesOfFreedom);
   const interval = { low: difference - half, high: difference + half };
-  return ok({ difference, standard, t, degreesOfFreedom, p, interval });
+  return ok({ difference, standard, t, degreesOfFreedom, quantile, p, interval });
 }

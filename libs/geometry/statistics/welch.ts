@@ -13,6 +13,8 @@ export interface MeanDifference {
   readonly t: number;
   /** Welch–Satterthwaite. */
   readonly degreesOfFreedom: number;
+  /** 97.5 % point of Student's t with these degrees of freedom: the interval is the difference ± this × standard. */
+  readonly quantile: number;
   /** Two-sided. */
   readonly p: number;
   /** 95 % interval. */
@@ -54,12 +56,14 @@ export function welchOf(
   const standard = Math.hypot(...parts.map((part) => part.standard));
   const difference = one.mean - two.mean;
   const t = difference / standard;
-  const half = t95(degreesOfFreedom) * standard;
+  const quantile = t95(degreesOfFreedom);
+  const half = quantile * standard;
   return ok({
     difference,
     standard,
     t,
     degreesOfFreedom,
+    quantile,
     p: 2 * studentBelow(-Math.abs(t), degreesOfFreedom),
     interval: { low: difference - half, high: difference + half },
   });

@@ -1,8 +1,7 @@
 import { type Outcome, ok } from '../outcome';
 import { FEWEST_STROKES } from '../statistics/compare-arms';
 import { Z95 } from '../statistics/normal';
-import { t95 } from '../statistics/distributions';
-import { welchOf } from '../statistics/welch';
+import { type MeanDifference, welchOf } from '../statistics/welch';
 import type { Interval } from '../uncertainty/elbow-interval';
 import { minimalChange } from './minimal-change';
 import type { SessionMean } from './session-mean';
@@ -23,6 +22,8 @@ export interface SessionChange {
   /** Minimal detectable change from marking and set-up alone. */
   readonly minimalChange: number;
   readonly verdict: ChangeVerdict;
+  /** The strokes' own test, set-up included; null with too few strokes, or when no stroke differs from another. */
+  readonly welch: MeanDifference | null;
 }
 
 /** Fewer than three strokes in a session give no verdict. Only for sessions of the same view and stroke kind. */
@@ -35,10 +36,13 @@ export function sessionChange(
   const change = after.mean - before.mean;
   const known = { change, minimalChange: smallest.value };
   if (Math.min(before.count, after.count) < FEWEST_STROKES)
-    return ok({ ...known, interval: null, verdict: 'too-few' });
-  const half = Math.max(smallest.value, strokesHalfWidth(before, after));
+    return ok({ ...known, interval: null, verdict: 'too-few', welch: null });
+  const setUp = Math.hypot(before.setUp, after.setUp);
+  const strokes = welchOf(before, after, setUp);
+  const half = Math.max(smallest.value, strokes.ok ? halfWidth(strokes.value) : Z95 * setUp);
   const interval = { low: change - half, high: change + half };
-  return ok({ ...known, interval, verdict: verdictOf(Math.abs(change), smallest.value, half) });
+  const verdict = verdictOf(Math.abs(change), smallest.value, half);
+  return ok({ ...known, interval, verdict, welch: strokes.ok ? strokes.value : null });
 }
 
 function verdictOf(size: number, marking: number, half: number): ChangeVerdict {
@@ -47,8 +51,6 @@ function verdictOf(size: number, marking: number, half: number): ChangeVerdict {
 }
 
 /** Half-width from the strokes' own spread, with the set-up that all strokes of a session share. */
-function strokesHalfWidth(before: SessionMean, after: SessionMean): number {
-  const setUp = Math.hypot(before.setUp, after.setUp);
-  const strokes = welchOf(before, after, setUp);
-  return strokes.ok ? t95(strokes.value.degreesOfFreedom) * strokes.value.standard : Z95 * setUp;
+function halfWidth({ quantile, standard }: MeanDifference): number {
+  return quantile * standard;
 }

@@ -1,7 +1,7 @@
-import type { MeasureComparison, Sample } from '@stillstroke/contract/comparison';
+import type { DifferenceTest, MeasureComparison, Sample } from '@stillstroke/contract/comparison';
 import { measureSchema, type Measure } from '@stillstroke/contract/measures';
 import { compareArms, type ArmComparison } from '@stillstroke/geometry/statistics/compare-arms';
-import { compareTogether } from '@stillstroke/geometry/statistics/compare-measures';
+import { compareTogether, type ComparedTogether } from '@stillstroke/geometry/statistics/compare-measures';
 import { t95, Z95 } from '@stillstroke/geometry/statistics/distributions';
 import { sessionMean } from '@stillstroke/geometry/trend/session-mean';
 import { markingPart, sharedPart, type KeptFigure } from '../measures/kept-figures';
@@ -27,8 +27,10 @@ export function compareFigures(figures: readonly KeptFigure[]): MeasureCompariso
       measureSchema.options.map((measure) => [measure, compareSides(sides[measure])]),
     ) as Record<Measure, ArmComparison>,
   );
+  const together = testedTogether(Object.values(compared));
   return measureSchema.options.map((measure) => {
     const { difference, interval, verdict, moreStrokes } = compared[measure];
+    const test = testOf(compared[measure], together);
     return {
       measure,
       unit: unitOf[measure],
@@ -39,6 +41,8 @@ export function compareFigures(figures: readonly KeptFigure[]): MeasureCompariso
       interval: interval === null ? null : { low: 0 - interval.high, high: 0 - interval.low },
       verdict,
       moreStrokes: moreStrokes === 0 ? null : moreStrokes,
+      // t has the sign of the difference.
+      test: test && { ...test, welch: test.welch && { ...test.welch, t: 0 - test.welch.t } },
     };
   });
 }
@@ -49,7 +53,7 @@ function sidesOf(figures: readonly KeptFigure[], measure: Measure): Sides {
   return { left: of('left'), right: of('right') };
 }
 
-function compareSides({ left, right }: Sides): ArmComparison {
+export function compareSides({ left, right }: Sides): ArmComparison {
   const compared = compareArms(
     left.map(({ value }) => value),
     right.map(({ value }) => value),
@@ -63,27 +67,54 @@ function compareSides({ left, right }: Sides): ArmComparison {
   return compared.value;
 }
 
-/** A camera's roll shifts both arms of a clip alike and drops out of their difference; of different clips it stays. */
-function commonPart({ left, right }: Sides): number {
+/** A camera's roll shifts all strokes of a clip alike and drops out of their difference; of different clips it stays. */
+export function commonPart({ left, right }: Sides): number {
   const clipsOf = (side: readonly KeptFigure[]) =>
     [...new Set(side.map(({ clipId }) => clipId))].sort().join();
   return clipsOf(left) === clipsOf(right) ? 0 : Math.hypot(sharedPart(left), sharedPart(right));
 }
 
 function summaryOf(side: readonly KeptFigure[]): Summary {
-  const samples = side.map(sampleOf);
-  const mean = sessionMean(
-    side.map(({ value }) => value),
-    { marking: side.map(markingPart), setUp: sharedPart(side) },
+  return { ...groupOf(side), samples: side.map(sampleOf) };
+}
+
+/** Count, mean, spread and interval of some strokes' figures of one measure. */
+export function groupOf(figures: readonly KeptFigure[]): Omit<Summary, 'samples'> {
+  const found = sessionMean(
+    figures.map(({ value }) => value),
+    { marking: figures.map(markingPart), setUp: sharedPart(figures) },
   );
-  if (!mean.ok) return { count: samples.length, mean: null, interval: null, samples };
-  const { count, sd, marking } = mean.value;
+  if (!found.ok) return { count: figures.length, mean: null, interval: null, sd: null, marking: null };
+  const { count, mean, sd, marking } = found.value;
   const half = sd === null ? null : Math.max((t95(count - 1) * sd) / Math.sqrt(count), Z95 * marking);
+  const interval = half === null ? null : { low: mean - half, high: mean + half };
+  return { count, mean, interval, sd, marking };
+}
+
+type Tested = Pick<ComparedTogether, 'welch' | 'marking' | 'p' | 'pTogether'>;
+
+/** How many comparisons had strokes enough to be judged. */
+export function testedTogether(compared: readonly Pick<ComparedTogether, 'pTogether'>[]): number {
+  return compared.filter(({ pTogether }) => pTogether !== null).length;
+}
+
+/** What stands behind a verdict; null below three strokes a side. */
+export function testOf(
+  { welch, marking, p, pTogether }: Tested,
+  measuresTogether: number,
+): DifferenceTest | null {
+  if (marking === null || p === null || pTogether === null) return null;
   return {
-    count,
-    mean: mean.value.mean,
-    interval: half === null ? null : { low: mean.value.mean - half, high: mean.value.mean + half },
-    samples,
+    welch: welch && {
+      standardError: welch.standard,
+      t: welch.t,
+      degreesOfFreedom: welch.degreesOfFreedom,
+      quantile: welch.quantile,
+    },
+    marking,
+    p,
+    pTogether,
+    measuresTogether,
   };
 }
 

@@ -10,6 +10,7 @@ import { forearmCurves } from '../measures/forearm-curves';
 import { keptFigures } from '../measures/kept-figures';
 import type { AppContext } from '../platform/context';
 import { liveSession } from '../sessions/live-film';
+import { compareBreath } from './compare-breath';
 import { compareFigures } from './compare-figures';
 
 /** Left against right in a session, over all strokes and apart by breath. Only full strokes of one side view go in. */
@@ -29,6 +30,8 @@ export function getComparison(
       breathing: compareFigures(figures.filter(({ breath }) => breath)),
       notBreathing: compareFigures(figures.filter(({ breath }) => !breath)),
     },
+    breath: compareBreath(figures),
+    view: taken[0]?.view ?? null,
     strokes: taken.flatMap((clip) => comparedStrokes(db, clip)),
     plumbAssumed: taken.some((clip) => clip.plumbTopX === null),
     verticalToleranceDeg: VERTICAL_TOLERANCE_DEG,
@@ -72,7 +75,7 @@ function reasonOf({ stroke }: ClipRow, hasStrokes: boolean): Comparison['leftOut
 }
 
 function comparedStrokes(db: Db, clip: ClipRow): Comparison['strokes'] {
-  return forearmCurves(db, clip).map(({ stroke, forearmCurve }) => ({
+  return forearmCurves(db, clip).map(({ stroke, forearmCurve, dropCurve }) => ({
     clipId: clip.id,
     strokeId: stroke.id,
     arm: stroke.arm,
@@ -80,5 +83,6 @@ function comparedStrokes(db: Db, clip: ClipRow): Comparison['strokes'] {
     catch: stroke.catchFrame,
     exit: stroke.exitFrame,
     forearmCurve,
+    dropCurve,
   }));
 }

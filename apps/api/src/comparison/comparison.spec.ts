@@ -53,6 +53,9 @@ describe('left against right', () => {
     expect(vertical?.right.samples[1]).toMatchObject({ clipId, frame: STROKE_FRAMES + 48 });
     expect(strokes).toHaveLength(10);
     expect(strokes[0]?.forearmCurve.map(({ share }) => share)).toEqual([0, 1]);
+    expect(strokes[0]?.dropCurve.map(({ frame }) => frame)).toEqual(
+      strokes[0]?.forearmCurve.map(({ frame }) => frame),
+    );
     expect(leftOut).toEqual([]);
   });
 
@@ -79,6 +82,61 @@ describe('left against right', () => {
     expect(verticalOf(splits.breathing)?.difference).toBeCloseTo(0.2, 6);
     expect(verticalOf(splits.notBreathing)?.left.count).toBe(3);
     expect(verticalOf(splits.all)?.left.count).toBe(4);
+  });
+
+  it('says what stands behind a verdict', async () => {
+    const clipId = place();
+    enter(clipId, 'left', [0.38, 0.4, 0.42, 0.39, 0.41]);
+    enter(clipId, 'right', [0.69, 0.7, 0.71, 0.68, 0.72]);
+    const row = verticalOf((await compare()).splits.all);
+    const { welch, marking, p, pTogether, measuresTogether } = row?.test ?? {};
+    expect(row?.left.sd).toBeCloseTo(Math.sqrt(0.00025), 9);
+    // Two means of five strokes with the same spread: √(2·s²/5), 8 degrees of freedom, t.975 = 2.3060.
+    expect(welch?.standardError).toBeCloseTo(Math.sqrt(0.0001), 9);
+    expect(welch?.degreesOfFreedom).toBeCloseTo(8, 6);
+    expect(welch?.quantile).toBeCloseTo(2.306, 4);
+    expect(welch?.t).toBeCloseTo(30, 4);
+    const half = Math.max((welch?.quantile ?? 0) * (welch?.standardError ?? 0), 1.959964 * (marking ?? 0));
+    expect(row?.interval?.high).toBeCloseTo(0.3 + half, 6);
+    expect(measuresTogether).toBeGreaterThan(1);
+    expect(pTogether).toBeGreaterThanOrEqual(p ?? NaN);
+  });
+
+  it('compares breathing strokes with the others of the same arm, and of both arms without mixing them', async () => {
+    const clipId = place();
+    const breath = [true, false, true, false, true, false];
+    // Breathing strokes 0.2 later on either arm; the right arm is later by 0.2 altogether.
+    enter(clipId, 'left', [0.5, 0.4, 0.62, 0.42, 0.61, 0.41], [true, false, true, false, true, false]);
+    enter(clipId, 'right', [0.8, 0.6, 0.82, 0.62, 0.81, 0.61], breath);
+    const { breath: compared } = await compare();
+    const of = (which: 'left' | 'right' | 'together') =>
+      compared[which].find(({ measure }) => measure === 'verticalAt');
+    expect(of('right')).toMatchObject({
+      verdict: 'breathing-larger',
+      breathing: { count: 3 },
+      others: { count: 3 },
+    });
+    expect(of('right')?.difference).toBeCloseTo(0.2, 6);
+    expect(of('right')?.interval?.low).toBeGreaterThan(0.1);
+    expect(of('left')?.difference).toBeCloseTo(0.5 / 3, 1);
+    expect(of('together')?.difference).toBeCloseTo(
+      ((of('left')?.difference ?? 0) + (of('right')?.difference ?? 0)) / 2,
+      9,
+    );
+    expect(of('together')).toMatchObject({ breathing: { count: 6, mean: null }, others: { count: 6 } });
+    expect(of('together')?.test?.measuresTogether).toBeGreaterThan(1);
+  });
+
+  it('gives no verdict on fewer than three breathing strokes', async () => {
+    const clipId = place();
+    enter(clipId, 'left', [0.4, 0.5, 0.41, 0.51, 0.42], [false, true, false, true, false]);
+    const { breath } = await compare();
+    expect(breath.left.find(({ measure }) => measure === 'verticalAt')).toMatchObject({
+      verdict: 'too-few',
+      interval: null,
+      test: null,
+    });
+    expect(breath.together.every(({ verdict }) => verdict === 'too-few')).toBe(true);
   });
 
   it('takes in full strokes of one side view, and says why the rest is left out', async () => {

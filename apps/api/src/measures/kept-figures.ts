@@ -1,10 +1,11 @@
+import type { StrokeKind } from '@stillstroke/contract/clip-facts';
 import type { Measure } from '@stillstroke/contract/measures';
 import type { Db } from '@stillstroke/db/open';
 import { clips, sessions, strokeFigures, strokes } from '@stillstroke/db/schema/film';
 import { and, asc, eq, inArray, isNull, type SQL } from 'drizzle-orm';
 import { sideViews, type SideView } from './compared-view';
 
-/** One kept figure of one stroke of a full-stroke clip from the side, with all that is needed to find it again. */
+/** One kept figure of one stroke of a clip from the side, with all that is needed to find it again. */
 export interface KeptFigure {
   readonly sessionId: string;
   readonly date: string;
@@ -20,8 +21,8 @@ export interface KeptFigure {
   readonly frame: number;
 }
 
-/** Kept figures by session date, clip and stroke. What is deleted, drills, and views not from the side are left out. */
-export function keptFigures(db: Pick<Db, 'select'>, of: SQL): KeptFigure[] {
+/** Kept figures of one stroke kind by session date, clip and stroke. What is deleted, and views not from the side, are left out. */
+export function keptFigures(db: Pick<Db, 'select'>, of: SQL, kind: StrokeKind = 'full'): KeptFigure[] {
   return db
     .select({
       sessionId: sessions.id,
@@ -46,7 +47,7 @@ export function keptFigures(db: Pick<Db, 'select'>, of: SQL): KeptFigure[] {
         of,
         isNull(sessions.deletedAt),
         isNull(clips.deletedAt),
-        eq(clips.stroke, 'full'),
+        eq(clips.stroke, kind),
         inArray(clips.view, [...sideViews]),
       ),
     )

@@ -1,8 +1,8 @@
 import type { Figure, Measure, StrokeMeasures as StrokeAnswer } from '@stillstroke/contract/measures';
 import { eventTimeUncertaintyUs, type FrameTimesUs } from '@stillstroke/geometry/events/frame-times';
-import type { Phase } from '@stillstroke/geometry/events/phases';
 import type { StrokeEvents } from '@stillstroke/geometry/events/stroke';
 import type { Measured } from '@stillstroke/geometry/measures/measured';
+import { measuredByName, type StrokeMeasureName } from '@stillstroke/geometry/measures/measured-by-name';
 import type { StrokeMeasures } from '@stillstroke/geometry/measures/stroke-measures';
 import type { Outcome } from '@stillstroke/geometry/outcome';
 
@@ -15,18 +15,19 @@ export function figuresOf(
   StrokeAnswer,
   'phases' | 'verticalAtShare' | 'peakElbowDrop' | 'elbowAtMidPull' | 'midPull' | 'strokeRate'
 > {
+  const named = (name: StrokeMeasureName) => measuredFigure(measuredByName(name, events, measures, times));
   return {
     phases: {
-      entryAndCatch: phaseFigure(measures, 'entryAndCatch'),
-      pull: phaseFigure(measures, 'pull'),
-      push: phaseFigure(measures, 'push'),
-      recovery: phaseFigure(measures, 'recovery'),
+      entryAndCatch: named('entryAndCatch'),
+      pull: named('pull'),
+      push: named('push'),
+      recovery: named('recovery'),
     },
-    verticalAtShare: measuredFigure(measures.verticalAt),
-    peakElbowDrop: measuredFigure(measures.peakDrop),
-    elbowAtMidPull: measuredFigure(measures.elbowAtMidPull),
+    verticalAtShare: named('verticalAt'),
+    peakElbowDrop: named('peakDrop'),
+    elbowAtMidPull: named('elbowAtMidPull'),
     midPull: midPullFigure(events, measures, times),
-    strokeRate: strokeRateFigure(events, measures),
+    strokeRate: named('strokeRate'),
   };
 }
 
@@ -73,29 +74,10 @@ const none = (reason: string): Figure => ({
   frames: [],
 });
 
-function measuredFigure(outcome: Outcome<Measured>): Figure {
+export function measuredFigure(outcome: Outcome<Measured>): Figure {
   if (!outcome.ok) return none(outcome.reason);
   const { value, uncertainty, frame, frames } = outcome.value;
   return { value, uncertainty, reason: null, frame, frames: [...frames] };
-}
-
-function phaseFigure(
-  { phases, midPull }: StrokeMeasures,
-  name: 'entryAndCatch' | 'pull' | 'push' | 'recovery',
-) {
-  if (!phases.ok) return none(phases.reason);
-  const phase: Phase | null = phases.value[name];
-  if (phase) {
-    const [first, last] = phase.frames;
-    return {
-      value: phase.share,
-      uncertainty: phase.uncertainty,
-      reason: null,
-      frame: first,
-      frames: [first, last],
-    };
-  }
-  return none(midPull.ok ? 'mid-pull-outside-pull' : midPull.reason);
 }
 
 /**
@@ -113,18 +95,4 @@ function midPullFigure(events: StrokeEvents, { midPull }: StrokeMeasures, times:
       share * eventTimeUncertaintyUs(times, events.exit),
     ) / lengthUs;
   return { value: share, uncertainty, reason: null, frame, frames: [events.catch, ...frames, events.exit] };
-}
-
-/** Cycles a minute of world time, f = 60/T; u(f) = f·u(T)/T. */
-function strokeRateFigure({ entry, nextEntry }: StrokeEvents, { phases }: StrokeMeasures): Figure {
-  if (!phases.ok) return none(phases.reason);
-  const { cycleS, cycleUncertaintyS } = phases.value;
-  const value = 60 / cycleS;
-  return {
-    value,
-    uncertainty: (value * cycleUncertaintyS) / cycleS,
-    reason: null,
-    frame: entry,
-    frames: nextEntry === null ? [entry] : [entry, nextEntry],
-  };
 }

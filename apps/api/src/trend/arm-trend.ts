@@ -46,6 +46,9 @@ function measuredSession(arm: Arm, figures: readonly KeptFigure[]): MeasuredSess
     mean: mean.value.mean,
     uncertainty: mean.value.uncertainty,
     count: mean.value.count,
+    sd: mean.value.sd,
+    marking: mean.value.marking,
+    setUp: mean.value.setUp,
     frames: figures.map(({ clipId, frame }) => ({ clipId, frame })),
   };
   return [{ point, mean: mean.value }];
@@ -58,16 +61,25 @@ const verdicts: Readonly<Record<SessionVerdict, ArmTrend['verdict']>> = {
   'too-few': 'too-few',
 };
 
+type ChangeFields = Pick<ArmTrend, 'change' | 'interval' | 'welch' | 'detectable' | 'verdict'>;
+
 /** Last against first session. */
-function changeOf(sessions: readonly MeasuredSession[]): Pick<ArmTrend, 'change' | 'detectable' | 'verdict'> {
+function changeOf(sessions: readonly MeasuredSession[]): ChangeFields {
   const first = sessions[0];
   const last = sessions.at(-1);
-  const none = { change: null, detectable: null, verdict: 'too-few' } as const;
+  const none = { change: null, interval: null, welch: null, detectable: null, verdict: 'too-few' } as const;
   if (!first || !last || first === last) return none;
   const change = sessionChange(first.mean, last.mean);
   if (!change.ok) return none;
+  const { welch, interval } = change.value;
   return {
     change: change.value.change,
+    interval,
+    welch: welch && {
+      standardError: welch.standard,
+      degreesOfFreedom: welch.degreesOfFreedom,
+      quantile: welch.quantile,
+    },
     detectable: change.value.minimalChange,
     verdict: verdicts[change.value.verdict],
   };
@@ -85,5 +97,6 @@ function slopeThrough(sessions: readonly MeasuredSession[]): ArmTrend['slope'] {
   const robust = robustSlope(points);
   if (!line.ok || !robust.ok) return null;
   const { low, high } = line.value.interval;
-  return { value: line.value.slope, low, high, robust: robust.value.slope };
+  const { slope: value, scatter, known } = line.value;
+  return { value, low, high, robust: robust.value.slope, scatter, known };
 }

@@ -1,55 +1,71 @@
 import type { SignedInUser } from '@stillstroke/contract/auth';
+import type { StrokeKind } from '@stillstroke/contract/clip-facts';
 import type { QueryOf } from '@stillstroke/contract/endpoint';
 import type { getTrend as trendCall, Trend } from '@stillstroke/contract/trend';
 import type { Db } from '@stillstroke/db/open';
 import { clips, sessions, strokeFigures } from '@stillstroke/db/schema/film';
 import { and, asc, eq, isNull, sql } from 'drizzle-orm';
-import { comparedView, type SideView } from '../measures/compared-view';
-import { keptFigures } from '../measures/kept-figures';
+import { comparedView, sideViews } from '../measures/compared-view';
+import { keptFigures, type KeptFigure } from '../measures/kept-figures';
 import { unitOf } from '../measures/units';
 import type { AppContext } from '../platform/context';
 import { athleteInReach } from '../reach/reach';
 import { armTrend } from './arm-trend';
 
-/** One measure over an athlete's sessions, each arm. Sessions filmed in another view, and drills, are not mixed in. */
+/**
+ * One measure over an athlete's sessions, each arm, of one view and one stroke kind: they are never mixed. What else there
+ * is to choose from, and which sessions have no point here, is said.
+ */
 export function getTrend(
   { db }: Pick<AppContext, 'db'>,
   user: SignedInUser,
   athleteId: string,
-  { measure }: QueryOf<typeof trendCall>,
+  { measure, view: wished, stroke }: QueryOf<typeof trendCall>,
 ): Trend {
   const athlete = athleteInReach(db, user, athleteId);
-  const figures = keptFigures(
-    db,
-    sql`${eq(sessions.athleteId, athlete.id)} and ${eq(strokeFigures.measure, measure)}`,
-  );
-  const view = comparedView(figures.map((figure) => figure.view));
+  const of = sql`${eq(sessions.athleteId, athlete.id)} and ${eq(strokeFigures.measure, measure)}`;
+  const figures = keptFigures(db, of, stroke);
+  const view = wished ?? comparedView(figures.map((figure) => figure.view)) ?? 'side-underwater';
   const taken = figures.filter((figure) => figure.view === view);
   return {
     athleteId: athlete.id,
     measure,
     unit: unitOf[measure],
-    view: view ?? 'side-underwater',
+    view,
+    stroke,
+    series: seriesOf({ [stroke]: figures, [otherKind(stroke)]: keptFigures(db, of, otherKind(stroke)) }),
     arms: [armTrend('left', taken), armTrend('right', taken)],
-    leftOut: leftOut(db, athlete.id, view, new Set(taken.map(({ sessionId }) => sessionId))),
+    leftOut: leftOut(db, athlete.id, { view, stroke }, new Set(taken.map(({ sessionId }) => sessionId))),
   };
+}
+
+const otherKind = (kind: StrokeKind): StrokeKind => (kind === 'full' ? 'drill' : 'full');
+
+/** Views and stroke kinds that have figures, with how many sessions each. */
+function seriesOf(figures: Partial<Record<StrokeKind, readonly KeptFigure[]>>): Trend['series'] {
+  return (['full', 'drill'] as const).flatMap((stroke) =>
+    sideViews.flatMap((view) => {
+      const own = (figures[stroke] ?? []).filter((figure) => figure.view === view);
+      const count = new Set(own.map(({ sessionId }) => sessionId)).size;
+      return count === 0 ? [] : [{ view, stroke, sessions: count }];
+    }),
+  );
 }
 
 /** Sessions without a point, and why. */
 function leftOut(
   db: Db,
   athleteId: string,
-  view: SideView | null,
+  { view, stroke }: Pick<Trend, 'view' | 'stroke'>,
   taken: ReadonlySet<string>,
 ): Trend['leftOut'] {
-  const shown = view ?? 'side-underwater';
   return db
     .select({
       sessionId: sessions.id,
       date: sessions.date,
       clips: sql<number>`count(${clips.id})`,
-      ofView: sql<number>`total(${clips.view} = ${shown} and ${clips.stroke} = 'full')`,
-      full: sql<number>`total(${clips.stroke} = 'full')`,
+      ofSeries: sql<number>`total(${clips.view} = ${view} and ${clips.stroke} = ${stroke})`,
+      ofKind: sql<number>`total(${clips.stroke} = ${stroke})`,
     })
     .from(sessions)
     .leftJoin(clips, and(eq(clips.sessionId, sessions.id), isNull(clips.deletedAt)))
@@ -58,9 +74,16 @@ function leftOut(
     .orderBy(asc(sessions.date), asc(sessions.createdAt))
     .all()
     .filter(({ sessionId }) => !taken.has(sessionId))
-    .map(({ sessionId, date, clips: all, ofView, full }) => ({
+    .map(({ sessionId, date, clips: all, ofSeries, ofKind }) => ({
       sessionId,
       date,
-      reason: all === 0 || ofView > 0 ? 'not-measured' : full > 0 ? 'other-view' : 'drill',
+      reason:
+        all === 0 || ofSeries > 0
+          ? 'not-measured'
+          : ofKind > 0
+            ? 'other-view'
+            : stroke === 'full'
+              ? 'drill'
+              : 'full-stroke',
     }));
 }

@@ -98,6 +98,47 @@ describe('a measure over the sessions', () => {
     ]);
   });
 
+  it('shows another view or drills when asked, and says what there is to choose', async () => {
+    visit('2026-03-01', [0.5]);
+    const above = visit('2026-03-02', [0.9, 0.8], { view: 'side-above' });
+    const drill = visit('2026-03-03', [0.7], { stroke: 'drill' });
+    const seen = await trend();
+    expect(seen.series).toEqual([
+      { view: 'side-underwater', stroke: 'full', sessions: 1 },
+      { view: 'side-above', stroke: 'full', sessions: 1 },
+      { view: 'side-underwater', stroke: 'drill', sessions: 1 },
+    ]);
+    const ofAbove = await trend('?view=side-above');
+    expect(left(ofAbove)?.points.map(({ sessionId }) => sessionId)).toEqual([above.sessionId]);
+    const ofDrill = await trend('?stroke=drill');
+    expect(left(ofDrill)?.points.map(({ sessionId }) => sessionId)).toEqual([drill.sessionId]);
+    expect(ofDrill).toMatchObject({ view: 'side-underwater', stroke: 'drill' });
+    expect(ofDrill.leftOut.map(({ reason }) => reason)).toEqual(['full-stroke', 'full-stroke']);
+    const coach = await club.agentFor('coach');
+    for (const query of [
+      'view=deck',
+      'view=front-underwater',
+      'stroke=all',
+      'view=side-above&view=side-above',
+    ])
+      expect((await coach.get(`/api/athletes/${athleteId}/trend?${query}`)).status, query).toBe(400);
+  });
+
+  it('says what stands behind a change', async () => {
+    visit('2026-03-01', [0.7, 0.72, 0.71, 0.69]);
+    visit('2026-06-01', [0.4, 0.41, 0.39, 0.4]);
+    const arm = left(await trend());
+    const [first, last] = arm?.points ?? [];
+    expect(arm?.detectable).toBeCloseTo(1.959964 * Math.hypot(first?.marking ?? 0, last?.marking ?? 0), 6);
+    expect(first?.sd).toBeCloseTo(Math.sqrt(0.0005 / 3), 9);
+    const half = Math.max(
+      arm?.detectable ?? 0,
+      (arm?.welch?.quantile ?? 0) * (arm?.welch?.standardError ?? 0),
+    );
+    expect(arm?.interval?.low).toBeCloseTo(-0.305 - half, 9);
+    expect(arm?.interval?.high).toBeCloseTo(-0.305 + half, 9);
+  });
+
   it('knows every measure by its unit', async () => {
     visit('2026-03-01', [0.5]);
     const rate = await trend('?measure=strokeRate');

@@ -22,6 +22,7 @@ import { sayTrend } from './trend-sentence';
 const leftOutWords = {
   'other-view': 'another view',
   drill: 'drill only',
+  'full-stroke': 'full strokes only',
   'not-measured': 'not measured',
 } as const;
 
