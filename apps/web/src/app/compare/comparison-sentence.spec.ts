@@ -2,7 +2,7 @@ import type { Comparison, MeasureComparison } from '@stillstroke/contract/compar
 import { describe, expect, it } from 'vitest';
 import { sayComparison, sayVerdict } from './comparison-sentence';
 
-const nobody = { count: 0, mean: null, interval: null, samples: [] };
+const nobody = { count: 0, mean: null, interval: null, sd: null, marking: null, samples: [] };
 
 function row(more: Partial<MeasureComparison>): MeasureComparison {
   return {
@@ -14,6 +14,7 @@ function row(more: Partial<MeasureComparison>): MeasureComparison {
     interval: { low: 0.17, high: 0.31 },
     verdict: 'right-larger',
     moreStrokes: null,
+    test: null,
     ...more,
   };
 }
@@ -24,7 +25,9 @@ describe('the sentence of a comparison', () => {
   it('says which arm, by how much, and over how many strokes', () => {
     const said = sayComparison(splits([row({})]));
     expect(said.headline).toBe('The right forearm comes to vertical later');
-    expect(said.detail).toBe('Right 58 %, left 34 %: 24 points apart (17 to 31), over 6 and 5 strokes.');
+    expect(said.detail).toBe(
+      'Right 58 %, left 34 %: 24 points apart (95 %: 17 to 31), over 6 and 5 strokes.',
+    );
   });
 
   it('says when breathing strokes carry the difference', () => {
@@ -43,7 +46,7 @@ describe('the sentence of a comparison', () => {
     expect(said.headline).toBe('Left and right cannot be told apart');
     expect(
       sayVerdict(row({ verdict: 'not-distinguishable', moreStrokes: 14, difference: 0.01 })).detail,
-    ).toBe('about 14 more strokes a side would settle 1 point');
+    ).toBe('95 %: 17 to 31; about 14 more strokes a side would settle 1 point');
   });
 
   it('says why an interval off zero is no difference yet: several measures were looked at', () => {
@@ -52,9 +55,9 @@ describe('the sentence of a comparison', () => {
       difference: 0.015,
       interval: { low: 0.003, high: 0.028 },
     });
-    expect(sayVerdict(push).detail).toBe('0.3 to 2.8; among so many measures one such comes by chance');
+    expect(sayVerdict(push).detail).toBe('95 %: 0.3 to 2.8; among so many measures one such comes by chance');
     const none = row({ verdict: 'not-distinguishable', difference: 0, interval: { low: -0.02, high: 0.02 } });
-    expect(sayVerdict(none).detail).toBe('−2 to 2');
+    expect(sayVerdict(none).detail).toBe('95 %: −2 to 2');
   });
 
   it('says how many strokes are missing', () => {

@@ -38,7 +38,7 @@ function sayDifference(row: MeasureComparison, splits: Comparison['splits']): Co
   const larger = arm === 'left' ? row.left : row.right;
   const smaller = arm === 'left' ? row.right : row.left;
   const amount = formatDifference(row.difference ?? 0, row.unit);
-  const interval = row.interval ? ` (${formatInterval(row.interval, row.unit)})` : '';
+  const interval = row.interval ? ` (95 %: ${formatInterval(row.interval, row.unit)})` : '';
   return {
     headline: words.larger(arm),
     detail:
@@ -67,11 +67,11 @@ export function sayVerdict(row: MeasureComparison): { verdict: string; detail: s
       return {
         verdict: measureWords[row.measure].largerBy(row.verdict === 'left-larger' ? 'Left' : 'Right', amount),
         detail: row.interval
-          ? `${formatInterval(row.interval, row.unit)}; more than marking could produce`
+          ? `95 %: ${formatInterval(row.interval, row.unit)}; more than marking could produce`
           : '',
       };
     case 'not-distinguishable':
-      return { verdict: 'Not distinguishable', detail: sayMore(row, amount) };
+      return { verdict: 'Not distinguishable', detail: sayUnsettled(row) };
     case 'too-few':
       return {
         verdict: 'Too few strokes',
@@ -80,16 +80,23 @@ export function sayVerdict(row: MeasureComparison): { verdict: string; detail: s
   }
 }
 
-function sayMore(row: MeasureComparison, amount: string): string {
-  if (row.moreStrokes === null) {
-    if (!row.interval) return '';
-    const crosses = row.interval.low <= 0 && row.interval.high >= 0;
-    const range = formatInterval(row.interval, row.unit);
+/** A difference that is not settled: its interval, and what would settle it. */
+export function sayUnsettled({
+  difference,
+  interval,
+  moreStrokes,
+  unit,
+}: Pick<MeasureComparison, 'difference' | 'interval' | 'moreStrokes' | 'unit'>): string {
+  if (!interval) return '';
+  const range = `95 %: ${formatInterval(interval, unit)}`;
+  if (moreStrokes === null) {
+    const crosses = interval.low <= 0 && interval.high >= 0;
     return crosses ? range : `${range}; among so many measures one such comes by chance`;
   }
-  return row.moreStrokes > 200
-    ? `${amount} apart; no reasonable number of strokes would settle it`
-    : `about ${row.moreStrokes} more ${row.moreStrokes === 1 ? 'stroke' : 'strokes'} a side would settle ${amount}`;
+  const amount = formatDifference(difference ?? 0, unit);
+  return moreStrokes > 200
+    ? `${range}; no reasonable number of strokes would settle ${amount}`
+    : `${range}; about ${moreStrokes} more ${moreStrokes === 1 ? 'stroke' : 'strokes'} a side would settle ${amount}`;
 }
 
 function strokesOf(rows: readonly MeasureComparison[]): string {

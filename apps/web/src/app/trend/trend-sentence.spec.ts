@@ -11,12 +11,17 @@ const point = (arm: 'left' | 'right', date: string, mean: number) => ({
   mean,
   uncertainty: 0.02,
   count: 3,
+  sd: 0.02,
+  marking: 0.02,
+  setUp: 0,
   frames: [],
 });
 const arm = (side: 'left' | 'right', more: Partial<ArmTrend>): ArmTrend => ({
   arm: side,
   points: [point(side, '2026-07-04', 0.71), point(side, '2026-11-28', 0.58)],
   change: -0.13,
+  interval: { low: -0.2, high: -0.06 },
+  welch: null,
   detectable: 0.06,
   verdict: 'changed',
   slope: null,
@@ -27,6 +32,8 @@ const trend = (arms: ArmTrend[], measure: Trend['measure'] = 'verticalAt'): Tren
   measure,
   unit: measure === 'verticalAt' ? 'share' : 'deg',
   view: 'side-underwater',
+  stroke: 'full',
+  series: [{ view: 'side-underwater', stroke: 'full', sessions: 2 }],
   arms,
   leftOut: [],
 });
