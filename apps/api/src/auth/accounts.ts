@@ -1,8 +1,9 @@
 import type { SignedInUser } from '@stillstroke/contract/auth';
 import type { Db } from '@stillstroke/db/open';
+import { preparedOnce } from '@stillstroke/db/prepared-once';
 import { clubs, users } from '@stillstroke/db/schema/club';
 import { signIns } from '@stillstroke/db/schema/sign-in';
-import { and, eq, isNull } from 'drizzle-orm';
+import { and, eq, isNull, sql } from 'drizzle-orm';
 
 const userColumns = {
   id: users.id,
@@ -16,14 +17,17 @@ const userColumns = {
 
 /** The account as long as it may be used: deactivated ones are not found. */
 export function activeUser(db: Db, id: string): SignedInUser | null {
-  const found = db
+  return activeById(db).get({ id }) ?? null;
+}
+
+const activeById = preparedOnce((db) =>
+  db
     .select(userColumns)
     .from(users)
     .innerJoin(clubs, eq(clubs.id, users.clubId))
-    .where(and(eq(users.id, id), isNull(users.deactivatedAt)))
-    .get();
-  return found ?? null;
-}
+    .where(and(eq(users.id, sql.placeholder('id')), isNull(users.deactivatedAt)))
+    .prepare(),
+);
 
 /** The active account behind an address (lower case) with its password hash. */
 export function activeUserByEmail(

@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto';
+import { preparedOnce } from '@stillstroke/db/prepared-once';
 import { signIns } from '@stillstroke/db/schema/sign-in';
-import { and, eq, gt, lt, lte } from 'drizzle-orm';
+import { and, eq, gt, lte, sql } from 'drizzle-orm';
 import { Store, type SessionData } from 'express-session';
 import type { AppContext } from '../platform/context';
 
@@ -8,6 +9,22 @@ const minute = 60_000;
 const pruneEvery = 15 * minute;
 /** Expiry is moved in steps of this, so that reading does not write to the disk each time. */
 const touchStep = 10 * minute;
+
+const signInBy = preparedOnce((db) =>
+  db
+    .select({ data: signIns.data, expiresAt: signIns.expiresAt })
+    .from(signIns)
+    .where(and(eq(signIns.idHash, sql.placeholder('idHash')), gt(signIns.expiresAt, sql.placeholder('now'))))
+    .prepare(),
+);
+
+const prolong = preparedOnce((db) =>
+  db
+    .update(signIns)
+    .set({ expiresAt: sql`${sql.placeholder('expiresAt')}` })
+    .where(eq(signIns.idHash, sql.placeholder('idHash')))
+    .prepare(),
+);
 
 type Done<T = void> = (error?: unknown, value?: T) => void;
 
@@ -25,11 +42,7 @@ export class SignInStore extends Store {
   override get(id: string, done: (error: unknown, data?: SessionData | null) => void): void {
     attempt(done, () => {
       const { db } = this.context;
-      const row = db
-        .select({ data: signIns.data })
-        .from(signIns)
-        .where(and(eq(signIns.idHash, hashOf(id)), gt(signIns.expiresAt, this.now())))
-        .get();
+      const row = signInBy(db).get({ idHash: hashOf(id), now: this.now() });
       return row ? (JSON.parse(row.data) as SessionData) : null;
     });
   }
@@ -66,11 +79,12 @@ export class SignInStore extends Store {
   override touch(id: string, _data: SessionData, done: Done = ignore): void {
     attempt(done, () => {
       const { db } = this.context;
-      const expiresAt = this.now() + this.lifetimeMs;
-      db.update(signIns)
-        .set({ expiresAt })
-        .where(and(eq(signIns.idHash, hashOf(id)), lt(signIns.expiresAt, expiresAt - touchStep)))
-        .run();
+      const idHash = hashOf(id);
+      const now = this.now();
+      // Read first: an update waits for other writers even when it finds nothing to change.
+      const expiresAt = now + this.lifetimeMs;
+      const there = signInBy(db).get({ idHash, now });
+      if (there && there.expiresAt < expiresAt - touchStep) prolong(db).run({ idHash, expiresAt });
     });
   }
 

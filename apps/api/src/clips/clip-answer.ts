@@ -1,7 +1,8 @@
 import type { Clip } from '@stillstroke/contract/clip-facts';
 import type { Db } from '@stillstroke/db/open';
+import { inListed, preparedOnce } from '@stillstroke/db/prepared-once';
 import { clips, marks, sessions, strokes } from '@stillstroke/db/schema/film';
-import { and, asc, eq, inArray, isNull, sql, type SQL } from 'drizzle-orm';
+import { and, asc, eq, isNull, sql, type SQL } from 'drizzle-orm';
 import { notFound } from '../platform/problem';
 
 export type ClipRow = typeof clips.$inferSelect;
@@ -10,8 +11,8 @@ export type ClipRow = typeof clips.$inferSelect;
 export function clipsOfSessions(db: Db, sessionIds: readonly string[]): Map<string, Clip[]> {
   const bySession = new Map<string, Clip[]>();
   if (sessionIds.length === 0) return bySession;
-  const found = answersWhere(db, and(inArray(clips.sessionId, [...sessionIds]), isNull(clips.deletedAt)));
-  for (const clip of found) {
+  const found = ofSessions(db).all({ sessionIds: JSON.stringify(sessionIds) });
+  for (const clip of found.map(asAnswer)) {
     const listed = bySession.get(clip.sessionId);
     if (listed) listed.push(clip);
     else bySession.set(clip.sessionId, [clip]);
@@ -21,12 +22,17 @@ export function clipsOfSessions(db: Db, sessionIds: readonly string[]): Map<stri
 
 /** One clip as the contract describes it; the caller has made sure that it may be seen. */
 export function clipAnswer(db: Db, clipId: string): Clip {
-  const clip = answersWhere(db, eq(clips.id, clipId))[0];
-  if (!clip) throw notFound('clip');
-  return clip;
+  const found = byId(db).get({ id: clipId });
+  if (!found) throw notFound('clip');
+  return asAnswer(found);
 }
 
-function answersWhere(db: Db, where: SQL | undefined): Clip[] {
+const byId = preparedOnce((db) => answersWhere(db, eq(clips.id, sql.placeholder('id'))).prepare());
+const ofSessions = preparedOnce((db) =>
+  answersWhere(db, and(inListed(clips.sessionId, 'sessionIds'), isNull(clips.deletedAt))).prepare(),
+);
+
+function answersWhere(db: Db, where: SQL | undefined) {
   return db
     .select({
       clip: clips,
@@ -37,12 +43,12 @@ function answersWhere(db: Db, where: SQL | undefined): Clip[] {
     .from(clips)
     .innerJoin(sessions, eq(sessions.id, clips.sessionId))
     .where(where)
-    .orderBy(asc(clips.createdAt), asc(clips.id))
-    .all()
-    .map(({ clip, ...counted }) => asAnswer(clip, counted));
+    .orderBy(asc(clips.createdAt), asc(clips.id));
 }
 
-function asAnswer(row: ClipRow, counted: Pick<Clip, 'athleteId' | 'markedFrames' | 'strokeCount'>): Clip {
+type Found = { clip: ClipRow } & Pick<Clip, 'athleteId' | 'markedFrames' | 'strokeCount'>;
+
+function asAnswer({ clip: row, ...counted }: Found): Clip {
   const { plumbTopX, plumbTopY, plumbBottomX, plumbBottomY, figuresFormulas: _, ...facts } = row;
   return { ...facts, plumb: plumbOf({ plumbTopX, plumbTopY, plumbBottomX, plumbBottomY }), ...counted };
 }

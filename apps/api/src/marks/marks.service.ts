@@ -2,10 +2,11 @@ import type { SignedInUser } from '@stillstroke/contract/auth';
 import type { BodyOf, ParamsOf, QueryOf } from '@stillstroke/contract/endpoint';
 import type { deleteMark as deleteCall, Mark, putMark as putCall } from '@stillstroke/contract/marks';
 import type { Db } from '@stillstroke/db/open';
+import { preparedOnce } from '@stillstroke/db/prepared-once';
 import { marks } from '@stillstroke/db/schema/film';
 import { armAngles } from '@stillstroke/geometry/angles/arm-angles';
 import { checkArmMark } from '@stillstroke/geometry/arm';
-import { and, asc, eq } from 'drizzle-orm';
+import { and, asc, eq, sql } from 'drizzle-orm';
 import type { ClipRow } from '../clips/clip-answer';
 import { refreshFiguresAt } from '../measures/figures';
 import type { AppContext } from '../platform/context';
@@ -19,14 +20,19 @@ type Place = Pick<ParamsOf<typeof putCall>, 'arm' | 'frame'>;
 /** All marks of a clip, by frame. */
 export function listMarks({ db }: Context, user: SignedInUser, clipId: string): Mark[] {
   const { clip } = liveClip(db, user, clipId);
-  return db
-    .select()
-    .from(marks)
-    .where(eq(marks.clipId, clip.id))
-    .orderBy(asc(marks.frame), asc(marks.arm))
-    .all()
+  return marksOfClip(db)
+    .all({ clipId: clip.id })
     .map((row) => markAnswer(row, clip));
 }
+
+const marksOfClip = preparedOnce((db) =>
+  db
+    .select()
+    .from(marks)
+    .where(eq(marks.clipId, sql.placeholder('clipId')))
+    .orderBy(asc(marks.frame), asc(marks.arm))
+    .prepare(),
+);
 
 /**
  * Sets the mark of one arm on one frame. Sent twice it is the same mark, of the same version; with a version, it is
@@ -90,8 +96,22 @@ const at = (clipId: string, { arm, frame }: Place) =>
   and(eq(marks.clipId, clipId), eq(marks.arm, arm), eq(marks.frame, frame));
 
 function markAt(db: Pick<Db, 'select'>, clipId: string, place: Place) {
-  return db.select().from(marks).where(at(clipId, place)).get();
+  return markQuery(db).get({ clipId, ...place });
 }
+
+const markQuery = preparedOnce((db) =>
+  db
+    .select()
+    .from(marks)
+    .where(
+      and(
+        eq(marks.clipId, sql.placeholder('clipId')),
+        eq(marks.arm, sql.placeholder('arm')),
+        eq(marks.frame, sql.placeholder('frame')),
+      ),
+    )
+    .prepare(),
+);
 
 function checkFrame({ frameCount }: ClipRow, frame: number): void {
   if (frame < frameCount) return;

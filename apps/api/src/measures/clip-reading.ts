@@ -1,3 +1,4 @@
+import { preparedOnce } from '@stillstroke/db/prepared-once';
 import { clipFrames, clips, marks, strokes } from '@stillstroke/db/schema/film';
 import type { Db } from '@stillstroke/db/open';
 import type { FrameMark } from '@stillstroke/geometry/arm';
@@ -5,7 +6,7 @@ import type { StrokeEvents } from '@stillstroke/geometry/events/stroke';
 import type { ReadingContext } from '@stillstroke/geometry/measures/reading-context';
 import { strokeMeasures, type StrokeMeasures } from '@stillstroke/geometry/measures/stroke-measures';
 import { defaultJointUncertaintyPx } from '@stillstroke/geometry/uncertainty/joint-uncertainty';
-import { and, asc, eq } from 'drizzle-orm';
+import { and, asc, eq, sql } from 'drizzle-orm';
 import { plumbOf, type ClipRow } from '../clips/clip-answer';
 import { frameTimes } from '../media/frame-blobs';
 
@@ -15,6 +16,37 @@ type Arm = StrokeRow['arm'];
 
 /** A database or a transaction in it. */
 export type Reader = Pick<Db, 'select'>;
+
+const clipId = sql.placeholder('clipId');
+const clipQuery = preparedOnce((db) => db.select().from(clips).where(eq(clips.id, clipId)).prepare());
+const strokesQuery = preparedOnce((db) =>
+  db
+    .select()
+    .from(strokes)
+    .where(eq(strokes.clipId, clipId))
+    .orderBy(asc(strokes.arm), asc(strokes.entryFrame))
+    .prepare(),
+);
+const armMarkQuery = preparedOnce((db) =>
+  db
+    .select()
+    .from(marks)
+    .where(and(eq(marks.clipId, clipId), eq(marks.arm, sql.placeholder('arm'))))
+    .orderBy(asc(marks.frame))
+    .prepare(),
+);
+const timesQuery = preparedOnce((db) =>
+  db
+    .select({ times: clipFrames.timestampsUs })
+    .from(clipFrames)
+    .where(eq(clipFrames.clipId, clipId))
+    .prepare(),
+);
+
+/** Strokes of a clip, by arm and entry. */
+export function strokeRows(db: Reader, ofClip: string): StrokeRow[] {
+  return strokesQuery(db).all({ clipId: ofClip });
+}
 
 /** What the readings of a clip depend on beside marks, events and frame times. */
 export function readingContext(clip: ClipRow): ReadingContext {
@@ -46,11 +78,7 @@ export function frameMark(row: MarkRow): FrameMark {
 
 /** Frame times of a clip in whole microseconds. */
 export function clipTimes(db: Reader, clipId: string): number[] {
-  const blob = db
-    .select({ times: clipFrames.timestampsUs })
-    .from(clipFrames)
-    .where(eq(clipFrames.clipId, clipId))
-    .get();
+  const blob = timesQuery(db).get({ clipId });
   return blob ? Array.from(frameTimes(blob.times)) : [];
 }
 
@@ -63,13 +91,7 @@ export interface MeasuredStroke {
 
 /** Strokes of a clip, by arm and entry, with the marks, times and context to read them. */
 export function readStrokes(db: Reader, clip: ClipRow, wanted: (stroke: StrokeRow) => boolean = () => true) {
-  const found = db
-    .select()
-    .from(strokes)
-    .where(eq(strokes.clipId, clip.id))
-    .orderBy(asc(strokes.arm), asc(strokes.entryFrame))
-    .all()
-    .filter(wanted);
+  const found = strokeRows(db, clip.id).filter(wanted);
   const marksOf = (arm: Arm) => (found.length === 0 ? [] : armMarks(db, clip.id, arm));
   return {
     strokes: found,
@@ -94,15 +116,9 @@ export function measureStrokes(
 }
 
 function armMarks(db: Reader, clipId: string, arm: Arm): FrameMark[] {
-  return db
-    .select()
-    .from(marks)
-    .where(and(eq(marks.clipId, clipId), eq(marks.arm, arm)))
-    .orderBy(asc(marks.frame))
-    .all()
-    .map(frameMark);
+  return armMarkQuery(db).all({ clipId, arm }).map(frameMark);
 }
 
 export function clipRow(db: Reader, clipId: string): ClipRow | undefined {
-  return db.select().from(clips).where(eq(clips.id, clipId)).get();
+  return clipQuery(db).get({ clipId });
 }

@@ -1,5 +1,6 @@
 import type { Session } from '@stillstroke/contract/sessions';
 import type { Db } from '@stillstroke/db/open';
+import { inListed, preparedOnce } from '@stillstroke/db/prepared-once';
 import { clips, strokeFigures, strokes } from '@stillstroke/db/schema/film';
 import { and, avg, count, eq, inArray, isNull } from 'drizzle-orm';
 import { grouped } from './grouped';
@@ -12,7 +13,22 @@ type Summary = Session['summary'];
  * clips that Compare takes in.
  */
 export function sessionSummaries(db: Db, sessionIds: readonly string[]): Map<string, Summary> {
-  const rows = db
+  const rows = summaryRows(db).all({ sessionIds: JSON.stringify(sessionIds) });
+  const summaries = new Map<string, Summary>();
+  for (const [sessionId, ofSession] of grouped(rows, (row) => row.sessionId)) {
+    const view = comparedView(ofSession.map((row) => row.view));
+    const taken = ofSession.filter((row) => row.view === view);
+    const of = (arm: 'left' | 'right') => taken.find((row) => row.arm === arm);
+    summaries.set(sessionId, {
+      strokes: { left: of('left')?.strokes ?? 0, right: of('right')?.strokes ?? 0 },
+      verticalAt: { left: of('left')?.verticalAt ?? null, right: of('right')?.verticalAt ?? null },
+    });
+  }
+  return summaries;
+}
+
+const summaryRows = preparedOnce((db) =>
+  db
     .select({
       sessionId: clips.sessionId,
       view: clips.view,
@@ -28,23 +44,12 @@ export function sessionSummaries(db: Db, sessionIds: readonly string[]): Map<str
     )
     .where(
       and(
-        inArray(clips.sessionId, [...sessionIds]),
+        inListed(clips.sessionId, 'sessionIds'),
         isNull(clips.deletedAt),
         eq(clips.stroke, 'full'),
         inArray(clips.view, [...sideViews]),
       ),
     )
     .groupBy(clips.sessionId, clips.view, strokes.arm)
-    .all();
-  const summaries = new Map<string, Summary>();
-  for (const [sessionId, ofSession] of grouped(rows, (row) => row.sessionId)) {
-    const view = comparedView(ofSession.map((row) => row.view));
-    const taken = ofSession.filter((row) => row.view === view);
-    const of = (arm: 'left' | 'right') => taken.find((row) => row.arm === arm);
-    summaries.set(sessionId, {
-      strokes: { left: of('left')?.strokes ?? 0, right: of('right')?.strokes ?? 0 },
-      verticalAt: { left: of('left')?.verticalAt ?? null, right: of('right')?.verticalAt ?? null },
-    });
-  }
-  return summaries;
-}
+    .prepare(),
+);

@@ -8,8 +8,9 @@ import type {
 } from '@stillstroke/contract/strokes';
 import type { Db } from '@stillstroke/db/open';
 import { strokes } from '@stillstroke/db/schema/film';
-import { and, asc, eq } from 'drizzle-orm';
+import { and, eq } from 'drizzle-orm';
 import type { ClipRow } from '../clips/clip-answer';
+import { strokeRows } from '../measures/clip-reading';
 import { refreshStrokeFigures } from '../measures/figures';
 import type { AppContext } from '../platform/context';
 import { changedMeanwhile, HttpProblem, notFound } from '../platform/problem';
@@ -22,13 +23,7 @@ type Row = typeof strokes.$inferSelect;
 /** Strokes of a clip, by arm and entry. */
 export function listStrokes({ db }: Context, user: SignedInUser, clipId: string): Stroke[] {
   const { clip } = liveClip(db, user, clipId);
-  return db
-    .select()
-    .from(strokes)
-    .where(eq(strokes.clipId, clip.id))
-    .orderBy(asc(strokes.arm), asc(strokes.entryFrame))
-    .all()
-    .map(answerOf);
+  return strokeRows(db, clip.id).map(answerOf);
 }
 
 /** Adds a stroke. Sent twice under the same id with the same content, it is one stroke. */

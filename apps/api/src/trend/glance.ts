@@ -1,5 +1,6 @@
 import type { Athlete } from '@stillstroke/contract/athletes';
 import type { Db } from '@stillstroke/db/open';
+import { preparedOnce } from '@stillstroke/db/prepared-once';
 import { clips, sessions, strokes } from '@stillstroke/db/schema/film';
 import { and, desc, eq, exists, inArray, isNull, sql } from 'drizzle-orm';
 import { sessionSummaries } from '../measures/session-summary';
@@ -28,8 +29,8 @@ export function verticalAtGlance(db: Db, athleteIds: readonly string[]): Map<str
 }
 
 /** Walks back from the newest session, so that it does not matter how many there are. */
-function newestMeasured(db: Db) {
-  return db
+const newestMeasured = preparedOnce((db) =>
+  db
     .select({ id: sessions.id })
     .from(sessions)
     .where(
@@ -54,5 +55,5 @@ function newestMeasured(db: Db) {
     )
     .orderBy(desc(sessions.date), desc(sessions.createdAt))
     .limit(1)
-    .prepare();
-}
+    .prepare(),
+);
