@@ -34,6 +34,9 @@ export const problemCodes = [
   'upload-malformed',
   'storage-full',
   'undo-expired',
+  'not-a-picture',
+  'review-sent',
+  'review-not-ready',
   'range-not-satisfiable',
   'internal',
 ] as const;

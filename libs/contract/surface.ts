@@ -8,8 +8,11 @@ import * as health from './health';
 import * as marks from './marks';
 import * as measures from './measures';
 import * as people from './people';
+import * as reviewLists from './review-lists';
+import * as reviews from './reviews';
 import * as sessions from './sessions';
 import * as squads from './squads';
+import * as stills from './stills';
 import * as strokes from './strokes';
 import * as trend from './trend';
 
@@ -35,4 +38,7 @@ export const surface: readonly Endpoint[] = [
   explanation,
   comparison,
   trend,
+  reviews,
+  stills,
+  reviewLists,
 ].flatMap((file) => Object.values(file).filter(isEndpoint));

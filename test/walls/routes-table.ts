@@ -3,6 +3,7 @@ import { marks, strokes } from '@stillstroke/db/schema/film';
 import { issueInvitation } from '../../apps/api/src/invitations/issue';
 import { placeClip, placeSession } from '../../apps/api/src/media/test-films';
 import { emailOf, testPassword, type ClubIds, type TestClub } from '../../apps/api/src/platform/test-club';
+import { placeReviewThings, reviewRoutes, type ReviewThings } from './review-routes';
 
 /**
  * Every route with what each kind of caller gets. All paths lead to things of the athlete `own`, whom `coach` coaches and
@@ -26,14 +27,25 @@ export const callers = [
 export type Caller = (typeof callers)[number];
 
 /** What is there when a route is tried. */
-export interface Things extends ClubIds {
+export interface Things extends ClubIds, ReviewThings {
   readonly sessionId: string;
   readonly clipId: string;
   readonly strokeId: string;
   readonly token: string;
 }
 
-type Statuses = readonly [number, number, number, number, number, number, number, number, number, number];
+export type Statuses = readonly [
+  number,
+  number,
+  number,
+  number,
+  number,
+  number,
+  number,
+  number,
+  number,
+  number,
+];
 
 export interface RouteRow {
   readonly route: string;
@@ -79,7 +91,7 @@ export function placeThings(club: TestClub): Things {
     })
     .run();
   const { token } = issueInvitation(context.db, context.now(), ids.users.guardian);
-  return { ...ids, sessionId, clipId, strokeId, token };
+  return { ...ids, ...placeReviewThings(club), sessionId, clipId, strokeId, token };
 }
 
 /** Everybody who is signed in. */
@@ -276,4 +288,6 @@ export const routes: readonly RouteRow[] = [
     path: (things) => `${clip(things)}/marks/left/20`,
     statuses: change(204),
   },
+
+  ...reviewRoutes,
 ];

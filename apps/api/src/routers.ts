@@ -8,8 +8,11 @@ import { marksRoutes } from './marks/marks.routes';
 import { measuresRoutes } from './measures/measures.routes';
 import { peopleRoutes } from './people/people.routes';
 import type { AppContext } from './platform/context';
+import { reviewListsRoutes } from './review-lists/review-lists.routes';
+import { reviewsRoutes } from './reviews/reviews.routes';
 import { sessionsRoutes } from './sessions/sessions.routes';
 import { squadsRoutes } from './squads/squads.routes';
+import { stillsRoutes } from './stills/stills.routes';
 import { strokesRoutes } from './strokes/strokes.routes';
 import { trendRoutes } from './trend/trend.routes';
 
@@ -29,4 +32,7 @@ export const routers: readonly RouterFactory[] = [
   explanationsRoutes,
   comparisonRoutes,
   trendRoutes,
+  reviewsRoutes,
+  stillsRoutes,
+  reviewListsRoutes,
 ];

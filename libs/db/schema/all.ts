@@ -1,6 +1,7 @@
 import * as club from './club';
 import * as film from './film';
+import * as review from './review';
 import * as signIn from './sign-in';
 
 /** Every table, for the ORM's typed queries and for the migration generator. */
-export const schema = { ...club, ...signIn, ...film };
+export const schema = { ...club, ...signIn, ...film, ...review };

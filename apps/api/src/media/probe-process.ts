@@ -4,12 +4,14 @@ import { readClipIndex } from '@stillstroke/clip-index/frame-index';
 import { FilePathSource, Input } from 'mediabunny';
 import { writePoster } from './poster';
 import type { ProbeAnswer, ProbeQuestion, ProbeReady } from './probe-protocol';
+import { remakePicture } from './remake-picture';
 
 /**
  * The process that looks into files. A file made to crash or stall a reader takes this process down and not the server,
  * which ends it after a time and starts another.
  */
 async function answerTo(question: ProbeQuestion): Promise<ProbeAnswer> {
+  if (question.kind === 'picture') return pictureAnswer(question.picture, question.made);
   const input = new Input({ source: new FilePathSource(question.film), formats: CLIP_FORMATS });
   try {
     if (question.kind === 'index') return { kind: 'index', index: await readClipIndex(input) };
@@ -20,6 +22,14 @@ async function answerTo(question: ProbeQuestion): Promise<ProbeAnswer> {
     return { kind: 'failed', message: error instanceof Error ? error.message : String(error) };
   } finally {
     input.dispose();
+  }
+}
+
+async function pictureAnswer(picture: string, made: string): Promise<ProbeAnswer> {
+  try {
+    return { kind: 'picture', ...(await remakePicture(picture, made)) };
+  } catch (error) {
+    return { kind: 'failed', message: error instanceof Error ? error.message : String(error) };
   }
 }
 

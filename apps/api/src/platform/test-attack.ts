@@ -40,6 +40,9 @@ export function attack(endpoint: Endpoint, plan: Attack): void {
       for (const who of [plan.by, ...Object.keys(plan.refused)] as Who[]) {
         browsers.set(who, await club.agentFor(who));
       }
+      // What a plan places in the club when first asked is there before anything is counted.
+      plan.path(club);
+      plan.good?.(club);
     });
     afterAll(() => club.close());
 

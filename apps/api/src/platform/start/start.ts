@@ -6,6 +6,7 @@ import { startPurging } from '../../media/purge';
 import { seedDemo } from '../../demo/seed';
 import { refreshOutdatedFigures } from '../../measures/figures';
 import { sweepFilms } from '../../media/sweep';
+import { sweepStills } from '../../stills/sweep-stills';
 import type { AppContext } from '../context';
 import { readSettings, type Settings } from '../settings';
 import { takeDataFolder } from './data-folder';
@@ -35,6 +36,7 @@ export async function start(options: StartOptions): Promise<() => Promise<void>>
   const { context, close } = openContext(settings, options.migrationsFolder);
   try {
     await sweepFilms(context);
+    await sweepStills(context);
     refreshOutdatedFigures(context);
     if (settings.demo) await seedDemo(context);
     const app = createApp(context, { webFolder: options.webFolder });

@@ -1,3 +1,4 @@
+import { measureNames } from '@stillstroke/contract/measure-names';
 import type { Measure } from '@stillstroke/contract/measures';
 import { formatDifference, unitOf } from './format-figure';
 
@@ -24,32 +25,32 @@ const share = (name: string, explains: string, what: string): MeasureWords => ({
 /** Names and sentences of every measure, one place for every page. */
 export const measureWords: Readonly<Record<Measure, MeasureWords>> = {
   verticalAt: {
-    name: 'Vertical at',
+    name: measureNames.verticalAt,
     explains: 'share of the pull, catch to exit',
     larger: (arm) => `The ${arm} forearm comes to vertical later`,
     largerBy: (arm, amount) => `${arm} later by ${amount}`,
     moved: (larger, amount) => `${larger ? 'later' : 'earlier'} by ${amount}`,
   },
   peakDrop: {
-    name: 'Largest elbow drop',
+    name: measureNames.peakDrop,
     explains: 'elbow behind the line shoulder to hand',
     larger: (arm) => `The ${arm} elbow drops more`,
     largerBy: (arm, amount) => `${arm} drops ${amount} more`,
     moved: (larger, amount) => `drops ${amount} ${larger ? 'more' : 'less'}`,
   },
   elbowAtMidPull: {
-    name: 'Elbow at mid-pull',
+    name: measureNames.elbowAtMidPull,
     explains: '180° is a straight arm; projected',
     larger: (arm) => `The ${arm} arm is straighter at mid-pull`,
     largerBy: (arm, amount) => `${arm} straighter by ${amount}`,
     moved: (larger, amount) => `${larger ? 'straighter' : 'more bent'} by ${amount}`,
   },
-  entryAndCatch: share('Entry and catch', 'share of the cycle', 'entry and catch'),
-  pull: share('Pull', 'share of the cycle, catch to mid-pull', 'the pull'),
-  push: share('Push', 'share of the cycle, mid-pull to exit', 'the push'),
-  recovery: share('Recovery', 'share of the cycle', 'the recovery'),
+  entryAndCatch: share(measureNames.entryAndCatch, 'share of the cycle', 'entry and catch'),
+  pull: share(measureNames.pull, 'share of the cycle, catch to mid-pull', 'the pull'),
+  push: share(measureNames.push, 'share of the cycle, mid-pull to exit', 'the push'),
+  recovery: share(measureNames.recovery, 'share of the cycle', 'the recovery'),
   strokeRate: {
-    name: 'Stroke rate',
+    name: measureNames.strokeRate,
     explains: 'cycles a minute; a cycle is two arm strokes',
     larger: (arm) => `The ${arm} arm turns over quicker`,
     largerBy: (arm, amount) => `${arm} quicker by ${amount}`,
