@@ -1,6 +1,7 @@
 import * as z from 'zod';
 import { viewSchema } from './clip-facts';
 import { endpoint, type AnswerOf } from './endpoint';
+import { uncertaintyPartSchema } from './explanation';
 import { frameSchema, idParams, idSchema } from './fields';
 import { curvePointSchema, measureSchema, unitSchema } from './measures';
 import { armSchema } from './strokes';
@@ -43,6 +44,8 @@ export const differenceTestSchema = z.strictObject({
       t: z.number(),
       degreesOfFreedom: z.number(),
       quantile: z.number(),
+      /** What the standard error is made of, largest first. */
+      parts: z.array(uncertaintyPartSchema),
     })
     .nullable(),
   /** Standard uncertainty of the difference from marking alone: the interval is never narrower than 1.96 times this. */

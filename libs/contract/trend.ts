@@ -1,6 +1,7 @@
 import * as z from 'zod';
 import { strokeKindSchema } from './clip-facts';
 import { endpoint, type AnswerOf } from './endpoint';
+import { uncertaintyPartSchema } from './explanation';
 import { dateSchema, frameSchema, idParams, idSchema } from './fields';
 import { measureSchema, unitSchema } from './measures';
 import { armSchema } from './strokes';
@@ -44,7 +45,13 @@ export const armTrendSchema = z.strictObject({
   interval: z.strictObject({ low: z.number(), high: z.number() }).nullable(),
   /** Welch's standard error and quantile behind the interval; null without one, or where all strokes are equal. */
   welch: z
-    .strictObject({ standardError: z.number(), degreesOfFreedom: z.number(), quantile: z.number() })
+    .strictObject({
+      standardError: z.number(),
+      degreesOfFreedom: z.number(),
+      quantile: z.number(),
+      /** What the standard error is made of, largest first. */
+      parts: z.array(uncertaintyPartSchema),
+    })
     .nullable(),
   /** Smallest change that marking could not produce (95 %). */
   detectable: z.number().nullable(),

@@ -39,6 +39,10 @@ describe('one kind of stroke against another, each arm against itself', () => {
     // s²/3 of each mean, over 4: √(4·(1/3))/2.
     expect(both.welch?.standard).toBeCloseTo(Math.sqrt(4 / 3) / 2, 12);
     expect(both.welch?.degreesOfFreedom).toBeCloseTo(8, 9);
+    expect(both.welch?.parts.map(({ source, share }) => [source, share])).toEqual([
+      ['first-strokes', expect.closeTo(0.5, 9)],
+      ['second-strokes', expect.closeTo(0.5, 9)],
+    ]);
     expect(both.welch?.standard).toBeLessThan(alone.welch?.standard ?? 0);
   });
 

@@ -2,10 +2,9 @@ import { type Outcome, ok, refused } from '../outcome';
 import type { Interval } from '../uncertainty/elbow-interval';
 import { FEWEST_STROKES, markingOfMean, twoSided } from './compare-arms';
 import { studentBelow, t95 } from './distributions';
-import { effectiveFreedom } from './effective-freedom';
 import { Z95 } from './normal';
 import { meanOf, type SampleReason, type SampleSummary, summarise } from './sample';
-import type { MeanDifference } from './welch';
+import { addedUp, type MeanDifference } from './welch';
 
 /** Two kinds of stroke of one arm: their values and, in the same order, each value's standard uncertainty from marking. */
 export interface Stratum {
@@ -109,16 +108,24 @@ export function kindVerdict(difference: number, p: number): Exclude<KindVerdict,
 
 function meanDifference(used: readonly Used[], difference: number): MeanDifference | null {
   const spreads = used.flatMap(({ one, other }) =>
-    [one, other].map(({ sd, count }) => ({
-      standard: (sd ?? 0) / Math.sqrt(count) / used.length,
+    (
+      [
+        ['first-strokes', one],
+        ['second-strokes', other],
+      ] as const
+    ).map(([source, { sd, count }]) => ({
+      source,
+      alone: (sd ?? 0) / Math.sqrt(count) / used.length,
       degreesOfFreedom: count - 1,
     })),
   );
-  if (spreads.every((part) => part.standard === 0)) return null;
-  const shared = used.map(({ common }) => ({ standard: common / used.length, degreesOfFreedom: Infinity }));
-  const parts = [...spreads, ...shared];
-  const standard = Math.hypot(...parts.map((part) => part.standard));
-  const degreesOfFreedom = effectiveFreedom(parts);
+  if (spreads.every(({ alone }) => alone === 0)) return null;
+  const shared = used.map(({ common }) => ({
+    source: 'shared' as const,
+    alone: common / used.length,
+    degreesOfFreedom: Infinity,
+  }));
+  const { standard, degreesOfFreedom, parts } = addedUp([...spreads, ...shared]);
   const quantile = t95(degreesOfFreedom);
   const t = difference / standard;
   const half = quantile * standard;
@@ -130,5 +137,6 @@ function meanDifference(used: readonly Used[], difference: number): MeanDifferen
     quantile,
     p: 2 * studentBelow(-Math.abs(t), degreesOfFreedom),
     interval: { low: difference - half, high: difference + half },
+    parts,
   };
 }

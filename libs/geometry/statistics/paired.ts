@@ -21,5 +21,6 @@ export function pairedDifference(
   const half = quantile * standard;
   const p = 2 * studentBelow(-Math.abs(t), degreesOfFreedom);
   const interval = { low: difference - half, high: difference + half };
-  return ok({ difference, standard, t, degreesOfFreedom, quantile, p, interval });
+  const parts = [{ source: 'first-strokes', alone: standard, share: 1 }] as const;
+  return ok({ difference, standard, t, degreesOfFreedom, quantile, p, interval, parts });
 }

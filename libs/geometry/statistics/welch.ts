@@ -1,5 +1,6 @@
 import { type Outcome, ok, refused } from '../outcome';
 import type { Interval } from '../uncertainty/elbow-interval';
+import { combine, type UncertaintyPart, type UncertaintySource } from '../uncertainty/parts';
 import { studentBelow, t95 } from './distributions';
 import { effectiveFreedom } from './effective-freedom';
 import { type SampleReason, type SampleSummary, summarise } from './sample';
@@ -19,6 +20,8 @@ export interface MeanDifference {
   readonly p: number;
   /** 95 % interval. */
   readonly interval: Interval;
+  /** What the standard error is made of, largest first. */
+  readonly parts: readonly UncertaintyPart[];
 }
 
 export type WelchReason = SampleReason | 'too-few-values' | 'no-spread';
@@ -46,14 +49,13 @@ export function welchOf(
   common = 0,
 ): Outcome<MeanDifference, 'too-few-values' | 'no-spread'> {
   if (one.sd === null || two.sd === null) return refused('too-few-values');
-  const parts = [
-    { standard: one.sd / Math.sqrt(one.count), degreesOfFreedom: one.count - 1 },
-    { standard: two.sd / Math.sqrt(two.count), degreesOfFreedom: two.count - 1 },
-    { standard: common, degreesOfFreedom: Infinity },
-  ];
+  const inputs = [
+    { source: 'first-strokes', alone: one.sd / Math.sqrt(one.count), degreesOfFreedom: one.count - 1 },
+    { source: 'second-strokes', alone: two.sd / Math.sqrt(two.count), degreesOfFreedom: two.count - 1 },
+    { source: 'shared', alone: common, degreesOfFreedom: Infinity },
+  ] as const;
   if (one.sd === 0 && two.sd === 0) return refused('no-spread');
-  const degreesOfFreedom = effectiveFreedom(parts);
-  const standard = Math.hypot(...parts.map((part) => part.standard));
+  const { degreesOfFreedom, standard, parts } = addedUp(inputs);
   const difference = one.mean - two.mean;
   const t = difference / standard;
   const quantile = t95(degreesOfFreedom);
@@ -66,5 +68,21 @@ export function welchOf(
     quantile,
     p: 2 * studentBelow(-Math.abs(t), degreesOfFreedom),
     interval: { low: difference - half, high: difference + half },
+    parts,
   });
+}
+
+/** Independent parts of a standard error: their sum, its degrees of freedom, and what each adds, largest first. */
+export function addedUp(
+  inputs: readonly {
+    readonly source: UncertaintySource;
+    readonly alone: number;
+    readonly degreesOfFreedom: number;
+  }[],
+): Pick<MeanDifference, 'standard' | 'degreesOfFreedom' | 'parts'> {
+  const { standard, parts } = combine(inputs);
+  const degreesOfFreedom = effectiveFreedom(
+    inputs.map(({ alone, degreesOfFreedom }) => ({ standard: alone, degreesOfFreedom })),
+  );
+  return { standard, degreesOfFreedom, parts: parts.filter(({ alone }) => alone > 0) };
 }

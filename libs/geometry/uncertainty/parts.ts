@@ -9,6 +9,10 @@ export type UncertaintySource =
   | 'mid-pull'
   | 'exit-frame'
   | 'next-entry-frame'
+  /** The spread of the strokes on either side of a difference, and what they share. */
+  | 'first-strokes'
+  | 'second-strokes'
+  | 'shared'
   | 'distance'
   | 'time';
 

@@ -110,6 +110,7 @@ export function testOf(
       t: welch.t,
       degreesOfFreedom: welch.degreesOfFreedom,
       quantile: welch.quantile,
+      parts: [...welch.parts],
     },
     marking,
     p,

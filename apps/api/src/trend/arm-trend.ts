@@ -79,6 +79,7 @@ function changeOf(sessions: readonly MeasuredSession[]): ChangeFields {
       standardError: welch.standard,
       degreesOfFreedom: welch.degreesOfFreedom,
       quantile: welch.quantile,
+      parts: [...welch.parts],
     },
     detectable: change.value.minimalChange,
     verdict: verdicts[change.value.verdict],

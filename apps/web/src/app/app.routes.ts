@@ -56,6 +56,12 @@ export const routes: Routes = [
     canActivate: [onlyFor('admin')],
     loadChildren: () => import('./club/club.routes'),
   },
+  {
+    path: 'method',
+    title: 'Method',
+    canActivate: [signedIn],
+    loadChildren: () => import('./method/method.routes'),
+  },
   { path: 'nothing-yet', title: 'Nothing yet', canActivate: [signedIn], component: NothingYetPage },
   { path: 'not-for-you', title: 'Not for you', component: NotForYouPage },
   { path: '**', title: 'No such page', component: NotFoundPage },

@@ -15,6 +15,7 @@ import { getComparison } from '@stillstroke/contract/comparison';
 import { getSession } from '@stillstroke/contract/sessions';
 import { apiResource } from '../core/api/api';
 import { ProblemMessage } from '../ui/problem-message';
+import { BreathRows } from './breath-rows';
 import { sayComparison } from './comparison-sentence';
 import { MeasureRows } from './measure-rows';
 import { PullCurve } from './pull-curve';
@@ -23,7 +24,7 @@ import { typicalStroke } from './pull-stroke';
 import { StillSource } from './still-source';
 
 const leftOutWords = {
-  'other-view': 'another view than side under water',
+  'other-view': 'another view than the one compared',
   drill: 'a drill',
   'no-strokes': 'no strokes set',
 } as const;
@@ -32,6 +33,7 @@ const leftOutWords = {
 @Component({
   selector: 'st-compare-page',
   imports: [
+    BreathRows,
     DatePipe,
     MatSliderModule,
     MatTabsModule,
@@ -62,6 +64,11 @@ export class ComparePage {
     const strokes = this.comparison.hasValue() ? this.comparison.value().strokes : [];
     return [typicalStroke(strokes, 'left'), typicalStroke(strokes, 'right')] as const;
   });
+  protected readonly view = computed(() =>
+    this.comparison.hasValue() && this.comparison.value().view === 'side-above'
+      ? 'side above water'
+      : 'side under water',
+  );
   protected readonly leftOut = computed(() => {
     const left = this.comparison.hasValue() ? this.comparison.value().leftOut : [];
     const clips = this.session.hasValue() ? this.session.value().clips : [];

@@ -1,22 +1,32 @@
-import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
 import { RouterLink } from '@angular/router';
-import type { MeasureComparison } from '@stillstroke/contract/comparison';
+import type { MeasureComparison, Sample } from '@stillstroke/contract/comparison';
+import { getStrokeExplanation } from '@stillstroke/contract/explanation';
+import type { Measure } from '@stillstroke/contract/measures';
+import { firstValueFrom } from 'rxjs';
+import { Api } from '../core/api/api';
+import { explainMeasure } from '../ui/explain/explain-measure';
+import type { Explain } from '../ui/explain/explanation';
+import { How } from '../ui/explain/how';
 import { formatFigure, onScreen } from '../ui/figure/format-figure';
 import { measureWords } from '../ui/figure/measure-words';
 import { ArmRail, type RailValue } from '../ui/rail/arm-rail';
 import { sayVerdict } from './comparison-sentence';
+import { explainDifference } from './explain-difference';
 
 const suffixes = { share: ' %', deg: '°', perMinute: '' } as const;
 
 /** One row a measure: its name, left and right on a rail, and the verdict in words with its strokes behind it. */
 @Component({
   selector: 'st-measure-rows',
-  imports: [ArmRail, RouterLink],
+  imports: [ArmRail, How, RouterLink],
   templateUrl: './measure-rows.html',
   styleUrl: './measure-rows.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class MeasureRows {
+  private readonly api = inject(Api);
+
   readonly rows = input.required<readonly MeasureComparison[]>();
 
   protected readonly shown = computed(() =>
@@ -37,13 +47,23 @@ export class MeasureRows {
         settled: row.verdict === 'left-larger' || row.verdict === 'right-larger',
         label: `${measureWords[row.measure].name}: left ${sayMean(row, 'left')}, right ${sayMean(row, 'right')}`,
         samples: (['left', 'right'] as const).flatMap((arm) =>
-          row[arm].samples.map((sample) => ({ arm, ...sample })),
+          row[arm].samples.map((sample) => ({ arm, ...sample, explain: this.explain(sample, row.measure) })),
         ),
+        explain: () => explainDifference(row),
       };
     }),
   );
 
   protected readonly format = formatFigure;
+
+  private explain({ strokeId }: Sample, measure: Measure): Explain {
+    return async () =>
+      explainMeasure(
+        await firstValueFrom(
+          this.api.call(getStrokeExplanation, { params: { id: strokeId }, query: { measure } }),
+        ),
+      );
+  }
 }
 
 function railValue(row: MeasureComparison, arm: 'left' | 'right'): RailValue | null {

@@ -13,6 +13,7 @@ function stroke(arm: 'left' | 'right', atShare: readonly (readonly [number, numb
     breath: false,
     catch: 10,
     exit: 20,
+    dropCurve: [],
     forearmCurve: atShare.map(([share, deg], at) => ({ frame: 10 + at, share, deg, uncertaintyDeg: 1 })),
   };
 }

@@ -17,6 +17,7 @@ import { DeskBar } from './bar/desk-bar';
 import { Conflicts } from './conflicts/conflicts';
 import { DeskKeyboard } from './keyboard/desk-keyboard';
 import { MarksList } from './marks/marks-list';
+import { DeskExplainer } from './readings/desk-explainer';
 import { Readings } from './readings/readings';
 import { DeskSaving } from './saving/desk-saving';
 import { SetUpPanel } from './set-up/set-up-panel';
@@ -87,6 +88,7 @@ export class Desk {
     if (reading.ok) return { shown: reading.value, reason: null };
     return { shown: null, reason: reading.reason === 'not-marked' ? null : reading.reason };
   });
+  protected readonly explainer = computed(() => new DeskExplainer(this.state()));
   protected readonly attention = computed(() => !['saved', 'saving'].includes(this.saving.state().kind));
   protected readonly stopped = computed(() => {
     const state = this.saving.state();

@@ -4,6 +4,7 @@ import type { Trend, TrendPoint } from '@stillstroke/contract/trend';
 import { scaleLinear, scaleUtc } from 'd3-scale';
 import { line } from 'd3-shape';
 import { formatFigure, formatUncertainty, onScreen } from '../ui/figure/format-figure';
+import { sayDay } from './say-day';
 
 const frame = { left: 56, right: 900, top: 20, bottom: 330 };
 /** From this many sessions on the points are joined; fewer are points only. */
@@ -54,7 +55,7 @@ export class TrendChart {
     for (const date of [...new Set(this.points().map((point) => point.date))].sort()) {
       const x = this.x()(Date.parse(date));
       const last = shown.at(-1);
-      if (!last || x - last.x > 62) shown.push({ x, text: sayDate(date) });
+      if (!last || x - last.x > 62) shown.push({ x, text: sayDay(date) });
     }
     return shown;
   });
@@ -84,21 +85,13 @@ export class TrendChart {
       link: place ? ['/clips', place.clipId] : ['/sessions', point.sessionId],
       query: place ? { frame: place.frame, arm: point.arm } : {},
       label:
-        `${sayDate(point.date)}, ${point.arm} arm: ${formatFigure(point.mean, unit, point.uncertainty)} ` +
+        `${sayDay(point.date)}, ${point.arm} arm: ${formatFigure(point.mean, unit, point.uncertainty)} ` +
         `${formatUncertainty(point.uncertainty, unit)} over ${point.count} strokes`,
     };
   }
 }
 
 const timeOf = ({ date }: { date: string }) => Date.parse(date);
-
-function sayDate(date: string): string {
-  return new Date(`${date}T12:00:00Z`).toLocaleDateString('en-GB', {
-    day: 'numeric',
-    month: 'short',
-    timeZone: 'UTC',
-  });
-}
 
 function formatTick(value: number, unit: 'share' | 'deg' | 'perMinute'): string {
   return `${String(value).replace('-', '−')}${unit === 'share' ? ' %' : unit === 'deg' ? '°' : ''}`;

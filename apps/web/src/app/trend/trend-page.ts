@@ -5,17 +5,23 @@ import { MatSelectModule } from '@angular/material/select';
 import { Router, RouterLink } from '@angular/router';
 import { getAthlete } from '@stillstroke/contract/athletes';
 import { measureSchema, type Measure } from '@stillstroke/contract/measures';
-import { getTrend } from '@stillstroke/contract/trend';
+import { strokeKindSchema } from '@stillstroke/contract/clip-facts';
+import { getTrend, sideViewSchema } from '@stillstroke/contract/trend';
 import { apiResource } from '../core/api/api';
 import {
   fixed,
   formatDifference,
   formatFigure,
+  formatInterval,
   formatUncertainty,
   onScreen,
 } from '../ui/figure/format-figure';
+import { How } from '../ui/explain/how';
 import { measuresInOrder, measureWords } from '../ui/figure/measure-words';
 import { ProblemMessage } from '../ui/problem-message';
+import { changeWords, explainChange, explainPoint, explainSlope } from './explain-trend';
+import { sayDay } from './say-day';
+import { saySeries } from './series-words';
 import { TrendChart } from './trend-chart';
 import { sayTrend } from './trend-sentence';
 
@@ -29,7 +35,7 @@ const leftOutWords = {
 /** One measure of one athlete over the sessions. */
 @Component({
   selector: 'st-trend-page',
-  imports: [DatePipe, MatFormFieldModule, MatSelectModule, ProblemMessage, RouterLink, TrendChart],
+  imports: [DatePipe, How, MatFormFieldModule, MatSelectModule, ProblemMessage, RouterLink, TrendChart],
   templateUrl: './trend-page.html',
   styleUrl: './trend-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -40,6 +46,9 @@ export class TrendPage {
   readonly athleteId = input.required<string>();
   /** From the address; anything that is no measure falls back to the first. */
   readonly measure = input<string>();
+  /** View and stroke kind, from the address; the server chooses a view where none is named. */
+  readonly view = input<string>();
+  readonly stroke = input<string>();
 
   protected readonly chosen = computed<Measure>(
     () => measureSchema.safeParse(this.measure()).data ?? 'verticalAt',
@@ -47,7 +56,11 @@ export class TrendPage {
   protected readonly athlete = apiResource(getAthlete, () => ({ params: { id: this.athleteId() } }));
   protected readonly trend = apiResource(getTrend, () => ({
     params: { id: this.athleteId() },
-    query: { measure: this.chosen() },
+    query: {
+      measure: this.chosen(),
+      view: sideViewSchema.safeParse(this.view()).data,
+      stroke: strokeKindSchema.safeParse(this.stroke()).data,
+    },
   }));
   protected readonly measures = measuresInOrder.map((measure) => ({
     measure,
@@ -55,6 +68,40 @@ export class TrendPage {
   }));
   protected readonly words = computed(() => measureWords[this.chosen()]);
   protected readonly shown = computed(() => (this.trend.hasValue() ? this.trend.value() : null));
+  protected readonly series = computed(() => {
+    const trend = this.shown();
+    return trend ? saySeries(trend) : 'side view';
+  });
+  protected readonly choices = computed(() =>
+    (this.shown()?.series ?? []).map((one) => ({
+      value: `${one.view} ${one.stroke}`,
+      name: `${saySeries(one)}, ${one.sessions} ${one.sessions === 1 ? 'session' : 'sessions'}`,
+    })),
+  );
+  protected readonly chosenSeries = computed(() => {
+    const trend = this.shown();
+    return trend && `${trend.view} ${trend.stroke}`;
+  });
+  protected readonly changes = computed(() => {
+    const trend = this.shown();
+    return (trend?.arms ?? []).flatMap((arm) => {
+      if (!trend || arm.change === null) return [];
+      const amount = `${arm.change < 0 ? '−' : ''}${formatDifference(arm.change, trend.unit)}`;
+      const range = arm.interval ? ` (95 %: ${formatInterval(arm.interval, trend.unit)})` : '';
+      const least =
+        arm.detectable === null
+          ? ''
+          : `; marking could produce ${formatDifference(arm.detectable, trend.unit)}`;
+      return [
+        {
+          arm: arm.arm,
+          verdict: changeWords[arm.verdict],
+          detail: `${amount}${range}${least}`,
+          explain: () => explainChange(trend, arm),
+        },
+      ];
+    });
+  });
   protected readonly sentence = computed(() => {
     const trend = this.shown();
     return trend && sayTrend(trend);
@@ -64,23 +111,34 @@ export class TrendPage {
   );
   protected readonly slopes = computed(() => {
     const trend = this.shown();
-    return (trend?.arms ?? []).flatMap(({ arm, slope }) =>
-      slope && trend
+    return (trend?.arms ?? []).flatMap((of) => {
+      const { arm, slope } = of;
+      return slope && trend
         ? [
             {
               arm,
+              explain: () => explainSlope(trend, of),
               value: `${this.signed(slope.value)} ${unitWords[trend.unit]} a month`,
-              detail: `${this.signed(slope.low)} to ${this.signed(slope.high)}; robust slope ${this.signed(slope.robust)}`,
+              detail: `95 %: ${this.signed(slope.low)} to ${this.signed(slope.high)}; robust slope ${this.signed(slope.robust)}`,
             },
           ]
-        : [],
+        : [];
+    });
+  });
+  protected readonly detectable = computed(() => {
+    const trend = this.shown();
+    return (trend?.arms ?? []).flatMap((arm) =>
+      arm.detectable === null || !trend
+        ? []
+        : [
+            {
+              arm: arm.arm,
+              text: formatDifference(arm.detectable, trend.unit),
+              explain: () => explainChange(trend, arm),
+            },
+          ],
     );
   });
-  protected readonly detectable = computed(() =>
-    (this.shown()?.arms ?? []).flatMap(({ arm, detectable }) =>
-      detectable === null ? [] : [{ arm, text: formatDifference(detectable, this.shown()?.unit ?? 'deg') }],
-    ),
-  );
   protected readonly leftOut = computed(() => {
     const left = this.shown()?.leftOut ?? [];
     return {
@@ -98,12 +156,23 @@ export class TrendPage {
         ...point,
         value: formatFigure(point.mean, trend?.unit ?? 'deg', point.uncertainty),
         spread: formatUncertainty(point.uncertainty, trend?.unit ?? 'deg'),
+        about: `${point.arm} arm, ${sayDay(point.date)}`,
+        explain: () => (trend ? explainPoint(trend, point) : null),
       }));
   });
 
   protected chooseMeasure(measure: Measure): void {
     void this.router.navigate([], {
       queryParams: { measure },
+      queryParamsHandling: 'merge',
+      replaceUrl: true,
+    });
+  }
+
+  protected chooseSeries(value: string): void {
+    const [view, stroke] = value.split(' ');
+    void this.router.navigate([], {
+      queryParams: { view, stroke },
       queryParamsHandling: 'merge',
       replaceUrl: true,
     });

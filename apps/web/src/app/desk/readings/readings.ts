@@ -1,9 +1,13 @@
 import { ChangeDetectionStrategy, Component, computed, input, output } from '@angular/core';
 import type { StrokeMeasures } from '@stillstroke/geometry/measures/stroke-measures';
+import type { Measure } from '@stillstroke/contract/measures';
 import { PlumbDial } from '../../ui/dial/plumb-dial';
+import type { Explain } from '../../ui/explain/explanation';
+import { How } from '../../ui/explain/how';
 import { fixed, formatFigure, formatUncertainty } from '../../ui/figure/format-figure';
 import { sayReason } from '../../ui/figure/reason-words';
 import { sayDrop, sayForearm, type ArmReading } from './arm-reading';
+import type { AngleName, DeskExplainer } from './desk-explainer';
 import { PullBar } from './pull-bar';
 
 /** The stroke that the current frame lies in, with what its marks give. */
@@ -17,7 +21,7 @@ export interface StrokeReading {
 /** Beside the stage: the current arm against the plumb, its four angles, and the stroke it belongs to. */
 @Component({
   selector: 'st-readings',
-  imports: [PlumbDial, PullBar],
+  imports: [How, PlumbDial, PullBar],
   templateUrl: './readings.html',
   styleUrl: './readings.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -31,8 +35,15 @@ export class Readings {
   readonly plumbAssumed = input(false);
   readonly toleranceDeg = input(15);
 
+  /** Opens the figures up; without it they stand alone. */
+  readonly explainer = input<DeskExplainer | null>(null);
+
   readonly goTo = output<number>();
 
+  protected readonly explainForearm = this.angle('forearm');
+  protected readonly explainVertical = this.measure('verticalAt');
+  protected readonly explainDrop = this.measure('peakDrop');
+  protected readonly explainElbow = this.measure('elbowAtMidPull');
   protected readonly armName = computed(() => (this.arm() === 'left' ? 'Left' : 'Right'));
   protected readonly forearm = computed(() => {
     const reading = this.reading();
@@ -56,12 +67,14 @@ export class Readings {
     return [
       {
         name: 'Upper arm',
+        explain: this.angle('upperArm'),
         value: formatFigure(angles.upperArmDeg, 'deg', uncertainty.upperArmDeg),
         spread: formatUncertainty(uncertainty.upperArmDeg, 'deg'),
         says: '',
       },
       {
         name: 'Elbow',
+        explain: this.angle('elbow'),
         value: formatFigure(angles.elbowDeg, 'deg', uncertainty.elbowDeg),
         // Near straight the angle folds back, so that ± would promise more than 180°.
         spread: uncertainty.nearStraight
@@ -71,6 +84,7 @@ export class Readings {
       },
       {
         name: 'Elbow drop',
+        explain: this.angle('elbowDrop'),
         value: formatFigure(angles.elbowDropDeg, 'deg', uncertainty.elbowDropDeg, true),
         spread: formatUncertainty(uncertainty.elbowDropDeg, 'deg'),
         says: sayDrop(angles.elbowDropDeg),
@@ -114,20 +128,21 @@ export class Readings {
     const named =
       pull && push
         ? ([
-            ['entry and catch', entryAndCatch],
-            ['pull', pull],
-            ['push', push],
-            ['recovery', recovery],
+            ['entry and catch', entryAndCatch, 'entryAndCatch'],
+            ['pull', pull, 'pull'],
+            ['push', push, 'push'],
+            ['recovery', recovery, 'recovery'],
           ] as const)
         : ([
-            ['entry and catch', entryAndCatch],
-            ['pull and push', propulsive],
-            ['recovery', recovery],
+            ['entry and catch', entryAndCatch, 'entryAndCatch'],
+            ['pull and push', propulsive, null],
+            ['recovery', recovery, 'recovery'],
           ] as const);
     return {
       why: '',
-      parts: named.map(([name, { share, uncertainty }]) => ({
+      parts: named.map(([name, { share, uncertainty }, measure]) => ({
         name,
+        explain: measure && this.measure(measure),
         share,
         text: `${formatFigure(share, 'share', uncertainty)} ${formatUncertainty(uncertainty, 'share')}`.replace(
           ' % ±',
@@ -136,4 +151,12 @@ export class Readings {
       })),
     };
   });
+
+  private angle(name: AngleName): Explain {
+    return () => this.explainer()?.angle(name) ?? null;
+  }
+
+  private measure(name: Measure): Explain {
+    return () => this.explainer()?.measure(name) ?? null;
+  }
 }
