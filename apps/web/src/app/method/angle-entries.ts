@@ -63,9 +63,9 @@ export const angleEntries = {
       'The angle between them is the elbow. The camera’s lean drops out of it.',
       'The elbow’s own mark moves both lines at once; that is counted, since taking the two lines as independent would be wrong.',
     ],
-    written: 'u² = u_S²/a² + u_W²/b² + u_E²·c²/(a²·b²)',
+    written: 'u² = S²/a² + W²/b² + E²·c²/(a²·b²)',
     symbols: [
-      ['u_S, u_E, u_W', 'standard uncertainty of shoulder, elbow and wrist, pixels'],
+      ['S, E, W', 'standard uncertainty of shoulder, elbow and wrist, pixels'],
       ['a, b, c', 'shoulder to elbow, elbow to wrist, shoulder to wrist, pixels'],
       ['u', 'standard uncertainty of the angle, radians'],
     ],

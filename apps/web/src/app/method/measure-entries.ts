@@ -46,10 +46,10 @@ export const measureEntries = {
       'Take the time from the catch to that moment and divide it by the time from catch to exit.',
       '“Not reached” is an answer.',
     ],
-    written: 's = (t − t_catch) / (t_exit − t_catch)',
+    written: 's = (t − c) / (e − c)',
     symbols: [
       ['t', 'moment the tolerance is met, by the frames’ own times'],
-      ['t_catch, t_exit', 'times of the event frames'],
+      ['c, e', 'times of the catch’s and the exit’s frames'],
     ],
     unit: 'share of the pull, percent',
     sign: 'Smaller is earlier.',

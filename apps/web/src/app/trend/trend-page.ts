@@ -17,7 +17,7 @@ import {
   onScreen,
 } from '../ui/figure/format-figure';
 import { How } from '../ui/explain/how';
-import { measuresInOrder, measureWords } from '../ui/figure/measure-words';
+import { measuresInOrder, measureWords, sayMoved } from '../ui/figure/measure-words';
 import { ProblemMessage } from '../ui/problem-message';
 import { changeWords, explainChange, explainPoint, explainSlope } from './explain-trend';
 import { sayDay } from './say-day';
@@ -86,7 +86,7 @@ export class TrendPage {
     const trend = this.shown();
     return (trend?.arms ?? []).flatMap((arm) => {
       if (!trend || arm.change === null) return [];
-      const amount = `${arm.change < 0 ? '−' : ''}${formatDifference(arm.change, trend.unit)}`;
+      const amount = sayMoved(trend.measure, arm.change);
       const range = arm.interval ? ` (95 %: ${formatInterval(arm.interval, trend.unit)})` : '';
       const least =
         arm.detectable === null

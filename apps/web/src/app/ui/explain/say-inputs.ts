@@ -1,4 +1,5 @@
 import type { Plumb, Point, Travel } from '@stillstroke/contract/clip-facts';
+import { ASSUMED_ROLL_UNCERTAINTY_DEG } from '@stillstroke/geometry/calibration/plumb';
 import { fixed } from '../figure/format-figure';
 import type { ExplainedInput } from './explanation';
 
@@ -35,8 +36,7 @@ export function sayClip(clip: {
 }
 
 function sayPlumb(plumb: Plumb | null): string {
-  if (!plumb)
-    return 'not set: the picture’s own vertical is assumed, with no uncertainty for the camera’s lean';
+  if (!plumb) return `not set: the picture’s own vertical is assumed, ± ${ASSUMED_ROLL_UNCERTAINTY_DEG}°`;
   const { top, bottom } = plumb;
   const length = Math.hypot(bottom.x - top.x, bottom.y - top.y);
   return `${sayPoint(top)} to ${sayPoint(bottom)}, ${fixed(length, 0)} pixels long`;
