@@ -8,6 +8,7 @@ export default defineConfig({
     './libs/db/schema/sign-in.ts',
     './libs/db/schema/film.ts',
     './libs/db/schema/review.ts',
+    './libs/db/schema/targets.ts',
   ],
   out: './libs/db/migrations',
   casing: 'snake_case',

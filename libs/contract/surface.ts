@@ -14,6 +14,7 @@ import * as sessions from './sessions';
 import * as squads from './squads';
 import * as stills from './stills';
 import * as strokes from './strokes';
+import * as targets from './targets';
 import * as trend from './trend';
 
 /** Whether an export of a contract file is a call (and not a schema beside it). */
@@ -41,4 +42,5 @@ export const surface: readonly Endpoint[] = [
   reviews,
   stills,
   reviewLists,
+  targets,
 ].flatMap((file) => Object.values(file).filter(isEndpoint));

@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import { marks, strokes } from '@stillstroke/db/schema/film';
+import { placeTarget } from '../../apps/api/src/targets/test-targets';
 import { issueInvitation } from '../../apps/api/src/invitations/issue';
 import { placeClip, placeSession } from '../../apps/api/src/media/test-films';
 import { emailOf, testPassword, type ClubIds, type TestClub } from '../../apps/api/src/platform/test-club';
@@ -31,6 +32,7 @@ export interface Things extends ClubIds, ReviewThings {
   readonly sessionId: string;
   readonly clipId: string;
   readonly strokeId: string;
+  readonly targetId: string;
   readonly token: string;
 }
 
@@ -90,8 +92,9 @@ export function placeThings(club: TestClub): Things {
       updatedAt,
     })
     .run();
+  const targetId = placeTarget(context, ids.athletes.own);
   const { token } = issueInvitation(context.db, context.now(), ids.users.guardian);
-  return { ...ids, ...placeReviewThings(club), sessionId, clipId, strokeId, token };
+  return { ...ids, ...placeReviewThings(club), sessionId, clipId, strokeId, targetId, token };
 }
 
 /** Everybody who is signed in. */
@@ -108,6 +111,7 @@ const changeOwn = (status: number): Statuses => [401, status, status, 404, statu
 const athlete = ({ athletes }: Things) => `/api/athletes/${athletes.own}`;
 const session = ({ sessionId }: Things) => `/api/sessions/${sessionId}`;
 const clip = ({ clipId }: Things) => `/api/clips/${clipId}`;
+const target = ({ targetId }: Things) => `/api/targets/${targetId}`;
 const stroke = ({ strokeId }: Things) => `/api/strokes/${strokeId}`;
 const joints = { shoulder: { x: 400, y: 300 }, elbow: { x: 500, y: 330 }, wrist: { x: 560, y: 420 } };
 
@@ -203,6 +207,26 @@ export const routes: readonly RouteRow[] = [
     path: (things) => `${athlete(things)}/trend`,
     query: '?measure=verticalAt',
     statuses: read,
+  },
+
+  { route: 'get /api/athletes/:id/targets', path: (things) => `${athlete(things)}/targets`, statuses: read },
+  {
+    route: 'post /api/athletes/:id/targets',
+    path: (things) => `${athlete(things)}/targets`,
+    body: () => ({ measure: 'peakDrop', arm: 'left', low: null, high: 12, words: 'elbow up' }),
+    statuses: change(201),
+  },
+  {
+    route: 'patch /api/targets/:id',
+    path: target,
+    body: () => ({ words: 'sooner', version: 1 }),
+    statuses: change(200),
+  },
+  { route: 'delete /api/targets/:id', path: target, statuses: change(200) },
+  {
+    route: 'post /api/targets/:id/restore',
+    path: (things) => `${target(things)}/restore`,
+    statuses: change(200),
   },
 
   {

@@ -14,6 +14,7 @@ import { sessionsRoutes } from './sessions/sessions.routes';
 import { squadsRoutes } from './squads/squads.routes';
 import { stillsRoutes } from './stills/stills.routes';
 import { strokesRoutes } from './strokes/strokes.routes';
+import { targetsRoutes } from './targets/targets.routes';
 import { trendRoutes } from './trend/trend.routes';
 
 export type RouterFactory = (context: AppContext) => Router;
@@ -35,4 +36,5 @@ export const routers: readonly RouterFactory[] = [
   reviewsRoutes,
   stillsRoutes,
   reviewListsRoutes,
+  targetsRoutes,
 ];

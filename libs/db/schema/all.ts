@@ -2,6 +2,7 @@ import * as club from './club';
 import * as film from './film';
 import * as review from './review';
 import * as signIn from './sign-in';
+import * as targets from './targets';
 
 /** Every table, for the ORM's typed queries and for the migration generator. */
-export const schema = { ...club, ...signIn, ...film, ...review };
+export const schema = { ...club, ...signIn, ...film, ...review, ...targets };

@@ -1,3 +1,5 @@
+import type { BodyOf } from '@stillstroke/contract/endpoint';
+import type { createTarget } from '@stillstroke/contract/targets';
 import type { StrokeKind } from '@stillstroke/contract/clip-facts';
 import type { Role } from '@stillstroke/contract/roles';
 import type { FilmName } from './film-truth';
@@ -33,6 +35,8 @@ export interface DemoAthlete {
   readonly key: string;
   readonly name: string;
   readonly squad: string;
+  /** What their coach set for them after the last session, in the coach's words. */
+  readonly targets?: readonly BodyOf<typeof createTarget>[];
   /** Oldest first. */
   readonly sessions: readonly DemoSession[];
 }
@@ -89,6 +93,16 @@ const INES: DemoAthlete = {
   key: 'ines-corrow',
   name: 'Ines Corrow',
   squad: 'masters',
+  targets: [
+    {
+      measure: 'verticalAt',
+      arm: 'both',
+      low: null,
+      high: 0.45,
+      words: 'Fingertips down before the head turns',
+    },
+    { measure: 'peakDrop', arm: 'right', low: null, high: 15, words: 'Elbow stays in front of the hand' },
+  ],
   sessions: [
     session(
       '2026-06-13',

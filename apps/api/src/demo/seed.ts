@@ -8,6 +8,7 @@ import { dropFolder } from '../media/clip-store';
 import type { AppContext } from '../platform/context';
 import { createSession } from '../sessions/sessions.service';
 import { createStroke } from '../strokes/strokes.service';
+import { createTarget } from '../targets/targets.service';
 import {
   demoMediaFolder,
   layOutClip,
@@ -96,6 +97,11 @@ function enterSeason(
     for (const session of athlete.sessions) {
       const coach = idOf(coachOf, athlete.squad);
       enterSession(context, coach, idOf(athleteIds, athlete.key), session, waiting);
+    }
+    const last = clockFrom(`${athlete.sessions.at(-1)?.date ?? opened.slice(0, 10)}T20:00:00.000Z`);
+    for (const target of athlete.targets ?? []) {
+      const coach = idOf(coachOf, athlete.squad);
+      createTarget({ ...context, now: last }, coach, idOf(athleteIds, athlete.key), target);
     }
   }
 }

@@ -1,4 +1,5 @@
 import { clips, sessions } from '@stillstroke/db/schema/film';
+import { targets } from '@stillstroke/db/schema/targets';
 import { and, inArray, isNotNull, lte } from 'drizzle-orm';
 import type { AppContext } from '../platform/context';
 import { undoCutoff } from '../sessions/undo';
@@ -35,6 +36,9 @@ export async function purgeDeleted({ db, settings, now }: Context): Promise<stri
         .returning({ id: clips.id })
         .all();
       tx.delete(sessions).where(inArray(sessions.id, expired)).run();
+      tx.delete(targets)
+        .where(and(isNotNull(targets.deletedAt), lte(targets.deletedAt, cutoff)))
+        .run();
       return new Set([...ofSessions, ...alone].map(({ id }) => id));
     },
     { behavior: 'immediate' },
