@@ -33,6 +33,8 @@ export interface Endpoint<
   readonly answer?: Answer;
   readonly bodyKind?: BodyKind;
   readonly answerKind?: AnswerKind;
+  /** Largest JSON body, bytes, where it may be larger than those of all other calls. */
+  readonly bodyBytes?: number;
   /** Success status; 200 where nothing is said. */
   readonly status?: number;
 }

@@ -37,6 +37,7 @@ export const problemCodes = [
   'not-a-picture',
   'review-sent',
   'review-not-ready',
+  'import-does-not-fit',
   'range-not-satisfiable',
   'internal',
 ] as const;

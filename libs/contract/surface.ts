@@ -4,7 +4,9 @@ import * as auth from './auth';
 import * as clips from './clips';
 import * as comparison from './comparison';
 import * as explanation from './explanation';
+import * as exports from './export';
 import * as health from './health';
+import * as imports from './import';
 import * as marks from './marks';
 import * as measures from './measures';
 import * as people from './people';
@@ -43,4 +45,6 @@ export const surface: readonly Endpoint[] = [
   stills,
   reviewLists,
   targets,
+  exports,
+  imports,
 ].flatMap((file) => Object.values(file).filter(isEndpoint));

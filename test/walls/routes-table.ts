@@ -115,6 +115,15 @@ const target = ({ targetId }: Things) => `/api/targets/${targetId}`;
 const stroke = ({ strokeId }: Things) => `/api/strokes/${strokeId}`;
 const joints = { shoulder: { x: 400, y: 300 }, elbow: { x: 500, y: 330 }, wrist: { x: 560, y: 420 } };
 
+const emptyExport = ({ sessionId, athletes }: Things) => ({
+  format: { name: 'stillstroke-export', version: 1 },
+  exportedAt: '2026-03-02T18:00:00.000Z',
+  scope: { kind: 'session', id: sessionId },
+  athlete: { id: athletes.own, name: 'Ebba Lindqvist' },
+  sessions: [],
+  trend: [],
+});
+
 export const routes: readonly RouteRow[] = [
   { route: 'get /api/health', path: () => '/api/health', statuses: open },
   { route: 'get /api/openapi.json', path: () => '/api/openapi.json', statuses: open },
@@ -314,4 +323,22 @@ export const routes: readonly RouteRow[] = [
   },
 
   ...reviewRoutes,
+  ...(['clips', 'sessions', 'athletes'] as const).map((of) => ({
+    route: `get /api/${of}/:id/export`,
+    path: (things: Things) => `${{ clips: clip, sessions: session, athletes: athlete }[of](things)}/export`,
+    statuses: read,
+  })),
+  {
+    route: 'post /api/sessions/:id/import/preview',
+    path: (things) => `${session(things)}/import/preview`,
+    body: (things) => ({ file: emptyExport(things) }),
+    statuses: change(200),
+  },
+  {
+    // The file has no clip, so that there is nothing to put anywhere; the basis is nobody's.
+    route: 'post /api/sessions/:id/import',
+    path: (things) => `${session(things)}/import`,
+    body: (things) => ({ file: emptyExport(things), choice: 'add', basis: 'none' }),
+    statuses: change(409),
+  },
 ];

@@ -1,5 +1,6 @@
 import { join } from 'node:path';
 import cookieParser from 'cookie-parser';
+import { surface } from '@stillstroke/contract/surface';
 import express, { type Express, type RequestHandler } from 'express';
 import { authRoutes } from './auth/auth.routes';
 import { signInState } from './auth/sign-in-state';
@@ -39,7 +40,7 @@ export function createApp(context: AppContext, options: AppOptions = {}): Expres
     ...state.handlers,
     csrfProtection(keyFor(secret, 'csrf'), settings.behindTls),
     onlyJson,
-    express.json({ limit: jsonLimit, type: 'application/json' }),
+    jsonBody,
   );
   app.use(healthRoutes(), authRoutes(context, state, secret));
   for (const router of options.routers ?? allRouters) app.use(router(context));
@@ -50,6 +51,26 @@ export function createApp(context: AppContext, options: AppOptions = {}): Expres
   app.use(errorHandler(log));
   return app;
 }
+
+const ordinaryBody = express.json({ limit: jsonLimit, type: 'application/json' });
+
+/** The few calls whose bodies may be larger, by what they say of themselves. */
+const largeBodies = surface.flatMap(({ path, bodyBytes }) =>
+  bodyBytes === undefined
+    ? []
+    : [
+        {
+          path: new RegExp(`^${path.replace(/:\w+/g, '[^/]+')}/?$`, 'i'),
+          parse: express.json({ limit: bodyBytes, type: 'application/json' }),
+        },
+      ],
+);
+
+/** Reads a JSON body: a large one only from somebody signed in, and only where one belongs. */
+const jsonBody: RequestHandler = (req, res, next) => {
+  const large = req.user && largeBodies.find(({ path }) => path.test(req.originalUrl.split('?')[0] ?? ''));
+  (large?.parse ?? ordinaryBody)(req, res, next);
+};
 
 /** Answers of the API are for one person now; routes that know better set their own. */
 const neverKept: RequestHandler = (_req, res, next) => {

@@ -3,6 +3,8 @@ import { athletesRoutes } from './athletes/athletes.routes';
 import { clipsRoutes } from './clips/clips.routes';
 import { comparisonRoutes } from './comparison/comparison.routes';
 import { explanationsRoutes } from './explanations/explanations.routes';
+import { exportsRoutes } from './exports/exports.routes';
+import { importsRoutes } from './imports/imports.routes';
 import { invitationsRoutes } from './invitations/invitations.routes';
 import { marksRoutes } from './marks/marks.routes';
 import { measuresRoutes } from './measures/measures.routes';
@@ -37,4 +39,6 @@ export const routers: readonly RouterFactory[] = [
   stillsRoutes,
   reviewListsRoutes,
   targetsRoutes,
+  exportsRoutes,
+  importsRoutes,
 ];

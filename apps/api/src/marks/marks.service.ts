@@ -4,15 +4,13 @@ import type { deleteMark as deleteCall, Mark, putMark as putCall } from '@stills
 import type { Db } from '@stillstroke/db/open';
 import { preparedOnce } from '@stillstroke/db/prepared-once';
 import { marks } from '@stillstroke/db/schema/film';
-import { armAngles } from '@stillstroke/geometry/angles/arm-angles';
-import { checkArmMark } from '@stillstroke/geometry/arm';
 import { and, asc, eq, sql } from 'drizzle-orm';
-import type { ClipRow } from '../clips/clip-answer';
 import { refreshFiguresAt } from '../measures/figures';
 import type { AppContext } from '../platform/context';
-import { changedMeanwhile, HttpProblem, notFound } from '../platform/problem';
+import { changedMeanwhile, notFound } from '../platform/problem';
 import { liveClip } from '../sessions/live-film';
 import { markAnswer } from './mark-answer';
+import { checkFrame, checkJoints, markColumns } from './mark-rules';
 
 type Context = Pick<AppContext, 'db' | 'now'>;
 type Place = Pick<ParamsOf<typeof putCall>, 'arm' | 'frame'>;
@@ -47,7 +45,7 @@ export function putMark(
   const { clip } = liveClip(db, user, clipId);
   checkFrame(clip, place.frame);
   checkJoints(joints, clip);
-  const fields = columns(joints);
+  const fields = markColumns(joints);
   return db.transaction(
     (tx) => {
       const there = markAt(tx, clip.id, place);
@@ -113,39 +111,6 @@ const markQuery = preparedOnce((db) =>
     .prepare(),
 );
 
-function checkFrame({ frameCount }: ClipRow, frame: number): void {
-  if (frame < frameCount) return;
-  throw new HttpProblem(
-    422,
-    'frame-out-of-range',
-    `The clip has frames 0 to ${frameCount - 1}; there is no frame ${frame}.`,
-  );
-}
-
-type Joints = Omit<BodyOf<typeof putCall>, 'version'>;
-
-/** Refuses a mark of which no angle can be read, now or with another plumb. */
-function checkJoints(joints: Joints, { travel }: ClipRow): void {
-  const readable = checkArmMark(joints).ok && armAngles(joints, { travel, plumb: null }).ok;
-  if (readable) return;
-  throw new HttpProblem(
-    422,
-    'joints-coincide',
-    'Two of the three joints lie on one point, so the arm has no direction. Move them apart.',
-  );
-}
-
-function columns({ shoulder, elbow, wrist }: Joints) {
-  return {
-    shoulderX: shoulder.x,
-    shoulderY: shoulder.y,
-    elbowX: elbow.x,
-    elbowY: elbow.y,
-    wristX: wrist.x,
-    wristY: wrist.y,
-  };
-}
-
-function isSame(there: typeof marks.$inferSelect, fields: ReturnType<typeof columns>): boolean {
+function isSame(there: typeof marks.$inferSelect, fields: ReturnType<typeof markColumns>): boolean {
   return (Object.keys(fields) as (keyof typeof fields)[]).every((key) => there[key] === fields[key]);
 }

@@ -10,11 +10,11 @@ export function filmName(sent: string | undefined): string {
 }
 
 /** Content-Disposition (RFC 6266) that names a download; the plain form is for readers that know no other. */
-export function disposition(name: string): string {
+export function disposition(name: string, how: 'inline' | 'attachment' = 'inline'): string {
   const ascii = name.replace(/[^\x20-\x7e]|["\\%;]/g, '_');
   const encoded = encodeURIComponent(name).replace(
     /['()*]/g,
     (sign) => `%${sign.charCodeAt(0).toString(16).toUpperCase()}`,
   );
-  return `inline; filename="${ascii}"; filename*=UTF-8''${encoded}`;
+  return `${how}; filename="${ascii}"; filename*=UTF-8''${encoded}`;
 }

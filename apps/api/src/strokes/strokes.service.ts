@@ -15,6 +15,7 @@ import { refreshStrokeFigures } from '../measures/figures';
 import type { AppContext } from '../platform/context';
 import { changedMeanwhile, HttpProblem, notFound } from '../platform/problem';
 import { liveClip } from '../sessions/live-film';
+import { strokeAnswer, strokeColumns } from './stroke-answer';
 import { checkEvents, checkNoOverlap } from './stroke-rules';
 
 type Context = Pick<AppContext, 'db' | 'now'>;
@@ -23,7 +24,7 @@ type Row = typeof strokes.$inferSelect;
 /** Strokes of a clip, by arm and entry. */
 export function listStrokes({ db }: Context, user: SignedInUser, clipId: string): Stroke[] {
   const { clip } = liveClip(db, user, clipId);
-  return strokeRows(db, clip.id).map(answerOf);
+  return strokeRows(db, clip.id).map(strokeAnswer);
 }
 
 /** Adds a stroke. Sent twice under the same id with the same content, it is one stroke. */
@@ -42,10 +43,10 @@ export function createStroke(
       if (there) return sameAgain(there, clip, fields);
       checkEvents(fields, clip.frameCount);
       checkNoOverlap(tx, { ...fields, id, clipId: clip.id });
-      const row = { id, clipId: clip.id, ...columns(fields), arm: fields.arm, ...stamp(user, now) };
+      const row = { id, clipId: clip.id, ...strokeColumns(fields), arm: fields.arm, ...stamp(user, now) };
       const stroke = tx.insert(strokes).values(row).returning().get();
       refreshStrokeFigures(tx, clip.id, id);
-      return answerOf(stroke);
+      return strokeAnswer(stroke);
     },
     { behavior: 'immediate' },
   );
@@ -55,7 +56,7 @@ type Fields = Omit<Stroke, 'id' | 'clipId' | 'version'>;
 
 /** A stroke of that id is there: the same one sent again, or a clash. Of another clip's nothing is told. */
 function sameAgain(there: Row, clip: ClipRow, wanted: Fields): Stroke {
-  const current = answerOf(there);
+  const current = strokeAnswer(there);
   if (there.clipId !== clip.id) {
     throw new HttpProblem(409, 'conflict', 'This id is taken; choose another.');
   }
@@ -75,7 +76,7 @@ export function updateStroke(
     (tx) => {
       const there = tx.select().from(strokes).where(eq(strokes.id, strokeId)).get();
       if (!there) throw notFound('stroke');
-      const current = answerOf(there);
+      const current = strokeAnswer(there);
       if (version !== undefined && version !== current.version) throw changedMeanwhile('stroke', current);
       const given = Object.fromEntries(Object.entries(change).filter(([, value]) => value !== undefined));
       const next: Stroke = { ...current, ...given };
@@ -83,12 +84,12 @@ export function updateStroke(
       checkNoOverlap(tx, next);
       const stroke = tx
         .update(strokes)
-        .set({ ...columns(next), ...stamp(user, now), version: current.version + 1 })
+        .set({ ...strokeColumns(next), ...stamp(user, now), version: current.version + 1 })
         .where(eq(strokes.id, strokeId))
         .returning()
         .get();
       refreshStrokeFigures(tx, clip.id, strokeId);
-      return answerOf(stroke);
+      return strokeAnswer(stroke);
     },
     { behavior: 'immediate' },
   );
@@ -110,30 +111,6 @@ function strokeInReach(db: Db, user: SignedInUser, strokeId: string): { clip: Cl
   return liveClip(db, user, stroke.clipId);
 }
 
-function columns(fields: Pick<Stroke, 'entry' | 'catch' | 'exit' | 'nextEntry' | 'breath'>) {
-  return {
-    entryFrame: fields.entry,
-    catchFrame: fields.catch,
-    exitFrame: fields.exit,
-    nextEntryFrame: fields.nextEntry,
-    breath: fields.breath,
-  };
-}
-
 function stamp(user: SignedInUser, now: () => Date) {
   return { updatedAt: now().toISOString(), updatedBy: user.id };
-}
-
-function answerOf(row: Row): Stroke {
-  return {
-    id: row.id,
-    clipId: row.clipId,
-    arm: row.arm,
-    entry: row.entryFrame,
-    catch: row.catchFrame,
-    exit: row.exitFrame,
-    nextEntry: row.nextEntryFrame,
-    breath: row.breath,
-    version: row.version,
-  };
 }

@@ -62,6 +62,12 @@ export const routes: Routes = [
     canActivate: [signedIn],
     loadChildren: () => import('./method/method.routes'),
   },
+  {
+    path: 'data-dictionary',
+    title: 'Data dictionary',
+    canActivate: [signedIn],
+    loadChildren: () => import('./take-along/data-dictionary.routes'),
+  },
   { path: 'nothing-yet', title: 'Nothing yet', canActivate: [signedIn], component: NothingYetPage },
   { path: 'not-for-you', title: 'Not for you', component: NotForYouPage },
   { path: '**', title: 'No such page', component: NotFoundPage },

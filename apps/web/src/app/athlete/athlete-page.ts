@@ -24,6 +24,7 @@ import { DeletedList } from '../ui/deleted-list';
 import { EmptyState } from '../ui/empty-state';
 import { LoadingLines } from '../ui/loading-lines';
 import { ProblemMessage } from '../ui/problem-message';
+import { TakeAlong } from '../take-along/take-along';
 import { SessionCard } from './session-card';
 import { TrendCard } from './trend-card';
 
@@ -58,6 +59,7 @@ export class AthletePage {
   private readonly ask = inject(Ask);
   private readonly dialog = inject(MatDialog);
   private readonly notices = inject(Notices);
+  private readonly takingAlong = inject(TakeAlong);
   private readonly title = inject(PageTitle);
   private readonly user = inject(SignInState).user;
 
@@ -101,6 +103,10 @@ export class AthletePage {
         this.notices.warn(problemOf(error).detail);
       },
     });
+  }
+
+  protected takeAlong({ id, name }: Athlete): void {
+    void this.takingAlong.takeAlong({ kind: 'athlete', id, name: this.own() ? 'your figures' : name });
   }
 
   protected async edit(athlete: Athlete): Promise<void> {

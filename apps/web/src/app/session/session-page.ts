@@ -29,6 +29,7 @@ import { LoadingLines } from '../ui/loading-lines';
 import { ProblemMessage } from '../ui/problem-message';
 import { RailGlance } from '../ui/rail-glance';
 import { sayDate } from '../ui/say-date';
+import { TakeAlong } from '../take-along/take-along';
 import { ClipCard } from './clip-card';
 import { sayMeasuredStrokes } from './session-words';
 import { UploadPanel } from './upload/upload-panel';
@@ -61,6 +62,7 @@ export class SessionPage implements HasUploads {
   private readonly dialog = inject(MatDialog);
   private readonly notices = inject(Notices);
   private readonly router = inject(Router);
+  private readonly takingAlong = inject(TakeAlong);
   private readonly title = inject(PageTitle);
   private readonly user = inject(SignInState).user;
 
@@ -109,6 +111,14 @@ export class SessionPage implements HasUploads {
         : [...session.clips, clip];
       return { ...session, clips };
     });
+  }
+
+  protected takeAlong({ id }: Session): void {
+    void this.takingAlong.takeAlong({ kind: 'session', id, name: `the session of ${this.when()}` });
+  }
+
+  protected bringIn(session: Session): void {
+    void this.takingAlong.bringIn(session, () => this.read.reload());
   }
 
   protected async edit(): Promise<void> {

@@ -4,6 +4,7 @@ import type { Clip } from '@stillstroke/contract/clip-facts';
 import { getSession } from '@stillstroke/contract/sessions';
 import { apiResource } from '../../core/api/api';
 import { SignInState } from '../../core/sign-in/sign-in-state';
+import { TakeAlong } from '../../take-along/take-along';
 import { PlumbSign } from '../../ui/plumb-sign';
 import { sayDate, viewWords } from '../clip-words';
 
@@ -17,6 +18,7 @@ import { sayDate, viewWords } from '../clip-words';
 })
 export class DeskBar {
   private readonly signIn = inject(SignInState);
+  private readonly takingAlong = inject(TakeAlong);
 
   readonly clip = input.required<Clip>();
   /** Null where nothing can be changed. */
@@ -47,4 +49,15 @@ export class DeskBar {
     return session ? sayDate(session.date) : 'Session';
   });
   protected readonly view = computed(() => viewWords[this.clip().view]);
+
+  protected takeAlong(): void {
+    const { id } = this.clip();
+    const unsaved = this.attention();
+    void this.takingAlong.takeAlong({
+      kind: 'clip',
+      id,
+      name: 'this clip',
+      ...(unsaved && { caution: 'Some changes are not saved yet; they are not in the file.' }),
+    });
+  }
 }
