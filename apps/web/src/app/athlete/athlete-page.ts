@@ -7,6 +7,7 @@ import {
   input,
   linkedSignal,
   signal,
+  viewChild,
 } from '@angular/core';
 import { MatButtonModule } from '@angular/material/button';
 import { MatDialog } from '@angular/material/dialog';
@@ -26,6 +27,7 @@ import { LoadingLines } from '../ui/loading-lines';
 import { ProblemMessage } from '../ui/problem-message';
 import { TakeAlong } from '../take-along/take-along';
 import { SessionCard } from './session-card';
+import { TargetsCard } from './targets-card';
 import { TrendCard } from './trend-card';
 
 const sessionsAtATime = 10;
@@ -48,6 +50,7 @@ interface Shown {
     ProblemMessage,
     RouterLink,
     SessionCard,
+    TargetsCard,
     TrendCard,
   ],
   templateUrl: './athlete-page.html',
@@ -64,6 +67,7 @@ export class AthletePage {
   private readonly user = inject(SignInState).user;
 
   readonly athleteId = input.required<string>();
+  private readonly targetsCard = viewChild(TargetsCard);
 
   protected readonly read = apiResource(getAthlete, () => ({ params: { id: this.athleteId() } }));
   protected readonly athlete = computed(() => (this.read.hasValue() ? this.read.value() : null));
@@ -86,6 +90,11 @@ export class AthletePage {
       const name = this.athlete()?.name;
       if (name) this.title.show(name);
     });
+  }
+
+  protected broughtBack(): void {
+    this.firstSessions.reload();
+    this.targetsCard()?.reload();
   }
 
   protected showOlder(): void {

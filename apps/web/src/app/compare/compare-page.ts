@@ -13,6 +13,7 @@ import { DatePipe } from '@angular/common';
 import { RouterLink } from '@angular/router';
 import { getComparison } from '@stillstroke/contract/comparison';
 import { getSession } from '@stillstroke/contract/sessions';
+import { listTargets } from '@stillstroke/contract/targets';
 import { apiResource } from '../core/api/api';
 import { ProblemMessage } from '../ui/problem-message';
 import { BreathRows } from './breath-rows';
@@ -52,6 +53,17 @@ export class ComparePage {
 
   protected readonly session = apiResource(getSession, () => ({ params: { id: this.sessionId() } }));
   protected readonly comparison = apiResource(getComparison, () => ({ params: { id: this.sessionId() } }));
+  private readonly athleteId = computed(() =>
+    this.session.hasValue() ? this.session.value().athleteId : undefined,
+  );
+  private readonly readTargets = apiResource(listTargets, () => {
+    const id = this.athleteId();
+    return id === undefined ? undefined : { params: { id } };
+  });
+  /** None while they are being read and where that fails: the comparison stands without them. */
+  protected readonly targets = computed(() =>
+    this.readTargets.hasValue() ? this.readTargets.value().items : [],
+  );
   protected readonly source = new StillSource();
   /** Share of the pull that both stills show, percent. */
   protected readonly sharePercent = signal(40);

@@ -3,6 +3,7 @@ import { RouterLink } from '@angular/router';
 import type { MeasureComparison, Sample } from '@stillstroke/contract/comparison';
 import { getStrokeExplanation } from '@stillstroke/contract/explanation';
 import type { Measure } from '@stillstroke/contract/measures';
+import type { Target } from '@stillstroke/contract/targets';
 import { firstValueFrom } from 'rxjs';
 import { Api } from '../core/api/api';
 import { explainMeasure } from '../ui/explain/explain-measure';
@@ -10,7 +11,8 @@ import type { Explain } from '../ui/explain/explanation';
 import { How } from '../ui/explain/how';
 import { formatFigure, onScreen } from '../ui/figure/format-figure';
 import { measureWords } from '../ui/figure/measure-words';
-import { ArmRail, type RailValue } from '../ui/rail/arm-rail';
+import { ArmRail, type RailBand, type RailValue } from '../ui/rail/arm-rail';
+import { bandOn, sayTargets } from './target-rows';
 import { sayVerdict } from './comparison-sentence';
 import { explainDifference } from './explain-difference';
 
@@ -29,23 +31,35 @@ export class MeasureRows {
 
   readonly rows = input.required<readonly MeasureComparison[]>();
 
+  /** The coach's bands for this athlete. */
+  readonly targets = input<readonly Target[]>([]);
+
   protected readonly shown = computed(() =>
     this.rows().map((row) => {
       const [left, right] = [railValue(row, 'left'), railValue(row, 'right')];
+      const [leftBand, rightBand] = [
+        bandOn(this.targets(), row, 'left'),
+        bandOn(this.targets(), row, 'right'),
+      ];
+      const against = sayTargets(this.targets(), row);
       return {
         row,
         words: measureWords[row.measure],
         left,
         right,
+        leftBand,
+        rightBand,
+        against,
         domain: domainOf(
           [left, right],
+          [leftBand, rightBand],
           row.unit === 'deg' ? 20 : 10,
           row.measure === 'elbowAtMidPull' ? 180 : Infinity,
         ),
         suffix: suffixes[row.unit],
         said: sayVerdict(row),
         settled: row.verdict === 'left-larger' || row.verdict === 'right-larger',
-        label: `${measureWords[row.measure].name}: left ${sayMean(row, 'left')}, right ${sayMean(row, 'right')}`,
+        label: `${measureWords[row.measure].name}: left ${sayMean(row, 'left')}, right ${sayMean(row, 'right')}${against.map(({ text }) => `. ${text}`).join('')}`,
         samples: (['left', 'right'] as const).flatMap((arm) =>
           row[arm].samples.map((sample) => ({ arm, ...sample, explain: this.explain(sample, row.measure) })),
         ),
@@ -79,12 +93,14 @@ function railValue(row: MeasureComparison, arm: 'left' | 'right'): RailValue | n
 /** Both ends of the rail, rounded outwards to the step, with room around what is drawn. */
 function domainOf(
   values: readonly (RailValue | null)[],
+  bands: readonly (RailBand | null)[],
   step: number,
   most: number,
 ): readonly [number, number] {
   const ends = values.flatMap((value) =>
     value ? [value.value, value.interval?.low ?? value.value, value.interval?.high ?? value.value] : [],
   );
+  ends.push(...bands.flatMap((band) => [band?.low ?? [], band?.high ?? []].flat()));
   if (ends.length === 0) return [0, step * 2];
   const low = Math.floor(Math.min(...ends) / step) * step;
   const high = Math.ceil(Math.max(...ends) / step) * step;

@@ -1,15 +1,19 @@
 import { inject, Injectable, signal } from '@angular/core';
 import { restoreClip } from '@stillstroke/contract/clips';
 import { restoreSession } from '@stillstroke/contract/sessions';
+import { restoreTarget } from '@stillstroke/contract/targets';
+import type { Observable } from 'rxjs';
 import { Api } from './api/api';
 import { problemOf } from './api/problem-of';
 import { Notices } from './notices';
 
+const restoring = { clip: restoreClip, session: restoreSession, target: restoreTarget };
+
 export interface DeletedThing {
-  readonly kind: 'clip' | 'session';
+  readonly kind: keyof typeof restoring;
   readonly id: string;
   readonly name: string;
-  /** The page it belonged to: of a clip its session, of a session its athlete. */
+  /** The page it belonged to: of a clip its session, of a session or target its athlete. */
   readonly parentId: string;
   /** Instant until which the server brings it back. */
   readonly undoUntil: string;
@@ -34,8 +38,8 @@ export class RecentlyDeleted {
   }
 
   restore(thing: DeletedThing, restored: () => void): void {
-    const endpoint = thing.kind === 'clip' ? restoreClip : restoreSession;
-    this.api.call(endpoint, { params: { id: thing.id } }).subscribe({
+    const call: Observable<unknown> = this.api.call(restoring[thing.kind], { params: { id: thing.id } });
+    call.subscribe({
       next: () => {
         this.drop(thing);
         this.notices.say(`${thing.name} is back.`);

@@ -19,6 +19,7 @@ import { DeskKeyboard } from './keyboard/desk-keyboard';
 import { MarksList } from './marks/marks-list';
 import { DeskExplainer } from './readings/desk-explainer';
 import { Readings } from './readings/readings';
+import { TargetLines } from './readings/target-lines';
 import { DeskSaving } from './saving/desk-saving';
 import { SetUpPanel } from './set-up/set-up-panel';
 import type { TheirMark } from './stage/desk-stage';
@@ -56,6 +57,7 @@ const FRAME_SAID_AFTER_MS = 500;
     Stage,
     Strip,
     StrokesPanel,
+    TargetLines,
     Transport,
   ],
   providers: [DeskKeyboard],

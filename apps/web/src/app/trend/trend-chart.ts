@@ -1,9 +1,11 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import { RouterLink } from '@angular/router';
+import type { Target } from '@stillstroke/contract/targets';
 import type { Trend, TrendPoint } from '@stillstroke/contract/trend';
 import { scaleLinear, scaleUtc } from 'd3-scale';
 import { line } from 'd3-shape';
 import { formatFigure, formatUncertainty, onScreen } from '../ui/figure/format-figure';
+import { trendBands } from './trend-bands';
 import { sayDay } from './say-day';
 
 const frame = { left: 56, right: 900, top: 20, bottom: 330 };
@@ -22,7 +24,11 @@ const normal95 = 1.96;
 export class TrendChart {
   readonly trend = input.required<Trend>();
 
+  /** The coach's bands for this athlete; those of this measure are drawn behind the points. */
+  readonly targets = input<readonly Target[]>([]);
+
   protected readonly frame = frame;
+  protected readonly bands = computed(() => trendBands(this.targets(), this.trend()));
   private readonly points = computed(() => this.trend().arms.flatMap(({ points }) => points));
   private readonly x = computed(() => {
     const times = this.points().map(timeOf);
@@ -38,12 +44,25 @@ export class TrendChart {
     const ends = this.points().flatMap(({ mean, uncertainty }) =>
       [mean - normal95 * uncertainty, mean + normal95 * uncertainty].map((end) => onScreen(end, unit)),
     );
+    ends.push(...this.bands().flatMap(({ low, high }) => [low ?? [], high ?? []].flat()));
     return scaleLinear()
       .domain([Math.min(...ends), Math.max(...ends)])
       .nice(5)
       .range([frame.bottom, frame.top]);
   });
 
+  protected readonly strips = computed(() =>
+    this.bands().map(({ id, low, high }) => {
+      const top = high === null ? frame.top : this.y()(high);
+      const bottom = low === null ? frame.bottom : this.y()(low);
+      return {
+        id,
+        top,
+        height: bottom - top,
+        edges: [low, high].flatMap((end) => (end === null ? [] : this.y()(end))),
+      };
+    }),
+  );
   protected readonly grid = computed(() =>
     this.y()
       .ticks(5)
@@ -69,7 +88,10 @@ export class TrendChart {
     }),
   );
   protected readonly label = computed(
-    () => `${this.points().length} points over the sessions; the table below lists them`,
+    () =>
+      `${this.points().length} points over the sessions; the table below lists them${this.bands()
+        .map(({ text }) => `. ${text}`)
+        .join('')}`,
   );
 
   private drawn(point: TrendPoint) {

@@ -7,6 +7,7 @@ import { getAthlete } from '@stillstroke/contract/athletes';
 import { measureSchema, type Measure } from '@stillstroke/contract/measures';
 import { strokeKindSchema } from '@stillstroke/contract/clip-facts';
 import { getTrend, sideViewSchema } from '@stillstroke/contract/trend';
+import { listTargets } from '@stillstroke/contract/targets';
 import { apiResource } from '../core/api/api';
 import {
   fixed,
@@ -62,6 +63,10 @@ export class TrendPage {
       stroke: strokeKindSchema.safeParse(this.stroke()).data,
     },
   }));
+  private readonly readTargets = apiResource(listTargets, () => ({ params: { id: this.athleteId() } }));
+  protected readonly targets = computed(() =>
+    this.readTargets.hasValue() ? this.readTargets.value().items : [],
+  );
   protected readonly measures = measuresInOrder.map((measure) => ({
     measure,
     name: measureWords[measure].name,

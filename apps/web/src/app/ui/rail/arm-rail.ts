@@ -7,6 +7,12 @@ export interface RailValue {
   readonly interval: { readonly low: number; readonly high: number } | null;
 }
 
+/** A band on the screen's scale; null = open on that side. */
+export interface RailBand {
+  readonly low: number | null;
+  readonly high: number | null;
+}
+
 const width = 400;
 const inset = 12;
 
@@ -15,8 +21,14 @@ const inset = 12;
   selector: 'st-arm-rail',
   template: `
     <svg viewBox="0 0 400 50" role="img" [attr.aria-label]="label()">
-      @if (band(); as band) {
-        <rect class="band" [attr.x]="band.x" y="2" [attr.width]="band.width" height="30" />
+      @for (band of bands(); track band.y) {
+        <rect
+          class="band"
+          [attr.x]="band.x"
+          [attr.y]="band.y"
+          [attr.width]="band.width"
+          [attr.height]="band.height"
+        />
       }
       <line class="rail" x1="12" x2="388" y1="20" y2="20" />
       @for (tick of ticks(); track tick.x) {
@@ -47,7 +59,9 @@ export class ArmRail {
   readonly domain = input.required<readonly [number, number]>();
   /** What follows a number at a tick: `°`, ` %`. */
   readonly suffix = input('');
-  readonly targetBand = input<readonly [number, number] | null>(null);
+  /** Bands behind the values, left's above right's, same scale; null ends reach the rail's own end. */
+  readonly leftBand = input<RailBand | null>(null);
+  readonly rightBand = input<RailBand | null>(null);
   /** The rail in words, for those who do not see it. */
   readonly label = input.required<string>();
 
@@ -66,12 +80,17 @@ export class ArmRail {
   });
   protected readonly leftDrawn = computed(() => this.drawn(this.left()));
   protected readonly rightDrawn = computed(() => this.drawn(this.right()));
-  protected readonly band = computed(() => {
-    const band = this.targetBand();
-    if (!band) return null;
-    const [from, to] = [this.x()(band[0]), this.x()(band[1])];
-    return { x: from, width: to - from };
-  });
+  protected readonly bands = computed(() => [
+    ...this.drawnBand(this.leftBand(), 2),
+    ...this.drawnBand(this.rightBand(), 20),
+  ]);
+
+  private drawnBand(band: RailBand | null, y: number) {
+    if (!band) return [];
+    const [first, last] = this.domain();
+    const [from, to] = [this.x()(band.low ?? first), this.x()(band.high ?? last)];
+    return [{ x: from, y, width: to - from, height: 18 }];
+  }
 
   private drawn(value: RailValue | null) {
     if (!value) return null;
