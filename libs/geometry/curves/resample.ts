@@ -9,8 +9,11 @@ export interface CurveSample {
 export type PercentCurve = readonly (number | null)[];
 
 export const CURVE_POINTS = 101;
-/** Marks further apart than this share of the pull do not support a line between them. Our own choice, no source. */
-export const WIDEST_GAP = 0.35;
+/**
+ * Marks further apart than this share of the pull do not support a line between them. Our own choice, no source: a third
+ * of the pull, as marked at the least, and a frame or two of rounding.
+ */
+export const WIDEST_GAP = 0.4;
 
 /**
  * Straight lines between neighbouring marks, read at every percent; null before the first, after the last, and across

@@ -19,7 +19,7 @@ import { ProblemMessage } from '../ui/problem-message';
 import { BreathRows } from './breath-rows';
 import { sayComparison } from './comparison-sentence';
 import { MeasureRows } from './measure-rows';
-import { PullCurve } from './pull-curve';
+import { PullCurves } from './pull-curves';
 import { PullStill } from './pull-still';
 import { typicalStroke } from './pull-stroke';
 import { StillSource } from './still-source';
@@ -40,7 +40,7 @@ const leftOutWords = {
     MatTabsModule,
     MeasureRows,
     ProblemMessage,
-    PullCurve,
+    PullCurves,
     PullStill,
     RouterLink,
   ],

@@ -22,11 +22,16 @@ describe('strokes shown side by side', () => {
   it('interpolates only between marks', () => {
     const one = stroke('left', [
       [0, 80],
-      [0.5, 20],
-      [1, -60],
+      [0.4, 20],
+      [0.8, -60],
     ]);
-    expect(forearmAt(one, 0.25)).toBeCloseTo(50);
-    expect(forearmAt(one, 0.75)).toBeCloseTo(-20);
+    expect(forearmAt(one, 0.2)).toBeCloseTo(50);
+    expect(forearmAt(one, 0.6)).toBeCloseTo(-20);
+    const far = stroke('left', [
+      [0, 80],
+      [0.6, 20],
+    ]);
+    expect(forearmAt(far, 0.3)).toBeNull();
     expect(
       forearmAt(
         stroke('left', [

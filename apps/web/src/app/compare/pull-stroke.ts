@@ -1,4 +1,5 @@
 import type { Comparison } from '@stillstroke/contract/comparison';
+import { resample } from '@stillstroke/geometry/curves/resample';
 
 export type ComparedStroke = Comparison['strokes'][number];
 
@@ -18,16 +19,9 @@ export function typicalStroke(
   return middles[Math.floor((middles.length - 1) / 2)]?.stroke ?? null;
 }
 
-/** Forearm in degrees at a share of the pull (0–1), straight between marked frames; null outside the marks. */
+/** Forearm in degrees at a whole percent of the pull (share 0–1), by the rule of the curves; null where marks do not carry it. */
 export function forearmAt({ forearmCurve }: ComparedStroke, share: number): number | null {
-  for (let i = 1; i < forearmCurve.length; i++) {
-    const before = forearmCurve[i - 1];
-    const after = forearmCurve[i];
-    if (!before || !after || share < before.share || share > after.share || after.share === before.share)
-      continue;
-    return before.deg + ((share - before.share) / (after.share - before.share)) * (after.deg - before.deg);
-  }
-  return null;
+  return resample(forearmCurve)[Math.round(share * 100)] ?? null;
 }
 
 /** The frame nearest by time to a share of the pull, given the times of the clip's frames. */

@@ -1,3 +1,4 @@
+import { WIDEST_GAP } from '@stillstroke/geometry/curves/resample';
 import type { MethodEntry } from './method-entry';
 
 const strokesAreTheSample = 'The strokes are the sample: a few strokes of one day say nothing of other days.';
@@ -230,7 +231,7 @@ export const statisticEntries = {
     what: 'Forearm or elbow drop over the pull in percent, stroke by stroke, and their mean and spread.',
     steps: [
       'Place every marked frame at its share of the time from catch to exit.',
-      'Between two neighbouring marks draw a straight line, but only where they are no more than 35 % of the pull apart; nothing before the first mark and nothing after the last.',
+      `Between two neighbouring marks draw a straight line, but only where they are no more than ${WIDEST_GAP * 100} % of the pull apart; nothing before the first mark and nothing after the last.`,
       'Read every stroke at each of the 101 percents that its marks support. At each percent take the mean and the standard deviation (divisor n − 1) of the strokes that are there.',
       'The mean is drawn where at least two strokes support it; the band is one standard deviation to either side.',
     ],
@@ -238,7 +239,7 @@ export const statisticEntries = {
     interval:
       'The band shows how strokes differ, about two of three lie in it. It is not an interval of the mean, and no test is made of it.',
     sources: [
-      { source: 'ownChoice', where: 'straight lines, and 35 % as the widest gap' },
+      { source: 'ownChoice', where: 'straight lines, and the widest gap' },
       { source: 'roislien2012', where: 'abstract: why no coefficient of likeness is shown' },
     ],
     limits: [
