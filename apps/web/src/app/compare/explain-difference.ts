@@ -6,7 +6,7 @@ import type {
 } from '@stillstroke/contract/comparison';
 import type { ExplainedFrame, ExplainedInput, Explanation } from '../ui/explain/explanation';
 import { sayAlone, sayParts } from '../ui/explain/part-words';
-import { fixed, formatDifference, formatFigure, formatInterval, type Unit } from '../ui/figure/format-figure';
+import { fixed, formatDifference, formatFigure, formatRange, type Unit } from '../ui/figure/format-figure';
 import { measureWords } from '../ui/figure/measure-words';
 import { sayBreathVerdict } from './breath-words';
 import { sayVerdict } from './comparison-sentence';
@@ -20,7 +20,7 @@ export function explainDifference(row: MeasureComparison): Explanation {
     entry: 'difference',
     of: `${measureWords[row.measure].name}: right arm less left arm`,
     result: sayVerdict(row).verdict,
-    interval: row.interval && `${sayDifference(row.interval, unit)}`,
+    interval: row.interval && formatRange(row.interval, unit, 'difference'),
     inputs: [
       ...sayGroup('Left arm', left, unit),
       ...sayGroup('Right arm', right, unit),
@@ -45,7 +45,7 @@ export function explainBreath(row: BreathComparison, whose: 'left' | 'right' | '
     entry: 'breath',
     of: `${measureWords[row.measure].name}, ${arms}: breathing strokes less the others`,
     result: sayBreathVerdict(row).verdict,
-    interval: row.interval && sayDifference(row.interval, unit),
+    interval: row.interval && formatRange(row.interval, unit, 'difference'),
     inputs: [
       ...sayGroup('Breathing strokes', breathing, unit),
       ...sayGroup('Other strokes', others, unit),
@@ -62,18 +62,11 @@ export function explainBreath(row: BreathComparison, whose: 'left' | 'right' | '
   };
 }
 
-/** `−3 to 9 points`: with its signs, since they say which side is larger. */
-function sayDifference(interval: { low: number; high: number }, unit: Unit): string {
-  const words = { share: ' points', deg: '°', perMinute: ' a minute' } as const;
-  const signed = interval.low < 0 && interval.high < 0 ? 'minus ' : '';
-  return `${signed}${formatInterval(interval, unit)}${words[unit]}`;
-}
-
 function sayGroup(name: string, { count, mean, sd, interval }: Group, unit: Unit): ExplainedInput[] {
   const strokes = `${count} ${count === 1 ? 'stroke' : 'strokes'}`;
   if (mean === null) return [{ name, value: strokes }];
   const spread = sd === null ? '' : `, standard deviation ${sayAlone(sd, unit).replace('± ', '')}`;
-  const range = interval ? ` (95 %: ${formatInterval(interval, unit)})` : '';
+  const range = interval ? ` (95 %: ${formatRange(interval, unit)})` : '';
   return [{ name, value: `mean ${formatFigure(mean, unit, 0)}${range}${spread}, ${strokes}` }];
 }
 

@@ -5,7 +5,7 @@ import {
   fixed,
   formatDifference,
   formatFigure,
-  formatInterval,
+  formatRange,
   formatUncertainty,
   onScreen,
 } from '../ui/figure/format-figure';
@@ -55,7 +55,7 @@ export function explainChange(trend: Trend, arm: ArmTrend): Explanation {
     entry: 'change',
     of: `${measureWords[measure].name}, ${armWords[arm.arm]}: last session less first`,
     result: changeWords[arm.verdict],
-    interval: arm.interval && `${sayEnds(arm.interval, unit)}`,
+    interval: arm.interval && formatRange(arm.interval, unit, 'difference'),
     inputs: [
       ...(first && last && first !== last
         ? [sayPoint('First session', first, unit), sayPoint('Last session', last, unit)]
@@ -116,11 +116,6 @@ export function explainSlope(trend: Trend, arm: ArmTrend): Explanation | null {
 }
 
 const unitSign = { share: ' points', deg: '°', perMinute: ' a minute' } as const;
-
-function sayEnds(interval: { low: number; high: number }, unit: Unit): string {
-  const minus = interval.low < 0 && interval.high < 0 ? 'minus ' : '';
-  return `${minus}${formatInterval(interval, unit)}${unitSign[unit]}`;
-}
 
 function sayWelch({ welch }: ArmTrend, unit: Unit): ExplainedInput[] {
   if (!welch) return [];

@@ -4,7 +4,7 @@ import { EVENT_ERROR_FRAMES } from '@stillstroke/geometry/events/frame-times';
 import { VERTICAL_TOLERANCE_DEG } from '@stillstroke/geometry/events/vertical-at';
 import { measuredByName } from '@stillstroke/geometry/measures/measured-by-name';
 import { normalInterval } from '@stillstroke/geometry/uncertainty/elbow-interval';
-import { unitOf, formatFigure, formatInterval, formatUncertainty } from '../../ui/figure/format-figure';
+import { unitOf, formatFigure, formatRange, formatUncertainty } from '../../ui/figure/format-figure';
 import { explainMeasure } from '../../ui/explain/explain-measure';
 import type { Explanation } from '../../ui/explain/explanation';
 import { sayParts } from '../../ui/explain/part-words';
@@ -41,7 +41,7 @@ export class DeskExplainer {
       entry: name,
       of: `${arm === 'left' ? 'Left' : 'Right'} arm, frame ${frame}`,
       result: `${formatFigure(angles[key], 'deg', uncertainty[key], name !== 'elbow')} ${formatUncertainty(uncertainty[key], 'deg')}`,
-      interval: formatInterval(interval, 'deg'),
+      interval: formatRange(interval, 'deg'),
       inputs: [...sayMarks([mark]), ...sayClip({ ...clip, jointUncertaintyPx: context.jointUncertaintyPx })],
       frames: [{ clipId: clip.id, arm, frame, says: `Frame ${frame}` }],
       parts: sayParts(uncertainty.parts[key], 'deg'),

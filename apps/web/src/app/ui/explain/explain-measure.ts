@@ -1,5 +1,5 @@
 import type { StrokeExplanation } from '@stillstroke/contract/explanation';
-import { fixed, formatFigure, formatInterval, formatUncertainty } from '../figure/format-figure';
+import { fixed, formatFigure, formatRange, formatUncertainty } from '../figure/format-figure';
 import { sayReason } from '../figure/reason-words';
 import type { ExplainedFrame, ExplainedInput, Explanation } from './explanation';
 import { sayParts } from './part-words';
@@ -17,7 +17,7 @@ export function explainMeasure(said: StrokeExplanation): Explanation {
       figure.value === null
         ? `No figure: ${sayReason(figure.reason)}`
         : `${formatFigure(figure.value, unit, figure.uncertainty)} ${formatUncertainty(figure.uncertainty ?? 0, unit)}`,
-    interval: interval && formatInterval(interval, unit),
+    interval: interval && formatRange(interval, unit),
     inputs: inputsOf(said),
     frames: figure.frames.map((frame) => placeOf(said, frame)),
     parts: sayParts(said.parts, unit),

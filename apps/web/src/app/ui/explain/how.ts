@@ -1,3 +1,4 @@
+import { createNoopScrollStrategy } from '@angular/cdk/overlay';
 import { ChangeDetectionStrategy, Component, inject, input } from '@angular/core';
 import { MatDialog } from '@angular/material/dialog';
 import type { Explain } from './explanation';
@@ -31,7 +32,8 @@ export class How {
       width: '36rem',
       maxWidth: '96vw',
       autoFocus: 'first-heading',
-      closeOnNavigation: true,
+      // The page stays free to scroll: a link in the dialog leads to a place on the next page while this one closes.
+      scrollStrategy: createNoopScrollStrategy(),
     });
   }
 }

@@ -1,5 +1,11 @@
 import { describe, expect, it } from 'vitest';
-import { formatDifference, formatFigure, formatInterval, formatUncertainty } from './format-figure';
+import {
+  formatDifference,
+  formatFigure,
+  formatInterval,
+  formatRange,
+  formatUncertainty,
+} from './format-figure';
 
 describe('figures on the screen', () => {
   it('shows as many digits as the uncertainty carries', () => {
@@ -27,5 +33,11 @@ describe('figures on the screen', () => {
     expect(formatDifference(-15.4, 'deg')).toBe('15°');
     expect(formatInterval({ low: -0.31, high: -0.17 }, 'share')).toBe('17 to 31');
     expect(formatInterval({ low: -4.2, high: 6 }, 'deg')).toBe('−4 to 6');
+  });
+
+  it('keeps the signs of a range', () => {
+    expect(formatRange({ low: -5.8, high: -3.1 }, 'deg')).toBe('−5.8 to −3.1°');
+    expect(formatRange({ low: 0.519, high: 0.641 }, 'share')).toBe('52 to 64 %');
+    expect(formatRange({ low: -0.16, high: -0.05 }, 'share', 'difference')).toBe('−16 to −5 points');
   });
 });

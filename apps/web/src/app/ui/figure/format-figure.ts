@@ -72,6 +72,18 @@ export function formatInterval(interval: { low: number; high: number }, unit: Un
   return shown.map((end) => fixed(end, narrow ? 1 : 0)).join(' to ');
 }
 
+/** Both ends of an interval with their signs, smaller first: `−16 to −5 points`, `52 to 64 %`. */
+export function formatRange(
+  interval: { low: number; high: number },
+  unit: Unit,
+  of: 'value' | 'difference' = 'value',
+): string {
+  const ends = [onScreen(interval.low, unit), onScreen(interval.high, unit)] as const;
+  const places = Math.abs(ends[1] - ends[0]) < 3 ? 1 : 0;
+  const sign = of === 'difference' && unit === 'share' ? ' points' : signOf[unit];
+  return `${fixed(ends[0], places)} to ${fixed(ends[1], places)}${sign}`;
+}
+
 /** Fixed decimals with a true minus and no negative zero. */
 export function fixed(value: number, places: number): string {
   const text = value.toFixed(places);
