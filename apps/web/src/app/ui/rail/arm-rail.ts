@@ -81,7 +81,7 @@ export class ArmRail {
   protected readonly leftDrawn = computed(() => this.drawn(this.left()));
   protected readonly rightDrawn = computed(() => this.drawn(this.right()));
   protected readonly bands = computed(() => [
-    ...this.drawnBand(this.leftBand(), 2),
+    ...this.drawnBand(this.leftBand(), 5),
     ...this.drawnBand(this.rightBand(), 20),
   ]);
 
@@ -89,7 +89,7 @@ export class ArmRail {
     if (!band) return [];
     const [first, last] = this.domain();
     const [from, to] = [this.x()(band.low ?? first), this.x()(band.high ?? last)];
-    return [{ x: from, y, width: to - from, height: 18 }];
+    return [{ x: from, y, width: to - from, height: 15 }];
   }
 
   private drawn(value: RailValue | null) {
