@@ -83,6 +83,8 @@ export class BringInDialog {
     return this.changes() ? null : 'Everything in the file is here already.';
   });
 
+  /** An option has to have a value, or its words are not shown when it is the chosen one. */
+  protected readonly nowhere = 'nowhere';
   protected readonly sayCounts = sayCounts;
   protected readonly saySetUp = saySetUp;
   protected readonly sayFigures = sayFigures;
@@ -107,8 +109,9 @@ export class BringInDialog {
     await this.look();
   }
 
-  protected async putOnto(clip: ImportClip, to: string | null): Promise<void> {
-    this.chosen.update((chosen) => new Map(chosen).set(clip.from.id, to));
+  protected async putOnto(clip: ImportClip, to: string): Promise<void> {
+    const onto = to === this.nowhere ? null : to;
+    this.chosen.update((chosen) => new Map(chosen).set(clip.from.id, onto));
     await this.look();
   }
 
