@@ -38,6 +38,13 @@ export const clipSchema = z.strictObject({
   stroke: strokeKindSchema,
   captureRateFactor: z.number(),
   plumb: plumbSchema.nullable(),
+  /** Standard uncertainty of a placed joint, per coordinate, pixels of the picture as shown. */
+  jointUncertaintyPx: z.strictObject({ shoulder: z.number(), elbow: z.number(), wrist: z.number() }),
+  jointUncertaintyOwn: z
+    .boolean()
+    .describe(
+      'True: found by marking again, by whoever placed most of the marks; false: the default for the size',
+    ),
   status: clipStatusSchema,
   width: z.int().describe('Pixels as shown, after rotation and pixel aspect'),
   height: z.int(),

@@ -38,6 +38,9 @@ export const problemCodes = [
   'review-sent',
   'review-not-ready',
   'import-does-not-fit',
+  'too-few-marks',
+  'round-not-done',
+  'round-finished',
   'range-not-satisfiable',
   'internal',
 ] as const;

@@ -10,6 +10,7 @@ import * as imports from './import';
 import * as marks from './marks';
 import * as measures from './measures';
 import * as people from './people';
+import * as repeatability from './repeatability';
 import * as reviewLists from './review-lists';
 import * as reviews from './reviews';
 import * as sessions from './sessions';
@@ -41,6 +42,7 @@ export const surface: readonly Endpoint[] = [
   explanation,
   comparison,
   trend,
+  repeatability,
   reviews,
   stills,
   reviewLists,

@@ -10,6 +10,7 @@ import { marksRoutes } from './marks/marks.routes';
 import { measuresRoutes } from './measures/measures.routes';
 import { peopleRoutes } from './people/people.routes';
 import type { AppContext } from './platform/context';
+import { repeatabilityRoutes } from './repeatability/repeatability.routes';
 import { reviewListsRoutes } from './review-lists/review-lists.routes';
 import { reviewsRoutes } from './reviews/reviews.routes';
 import { sessionsRoutes } from './sessions/sessions.routes';
@@ -35,6 +36,7 @@ export const routers: readonly RouterFactory[] = [
   explanationsRoutes,
   comparisonRoutes,
   trendRoutes,
+  repeatabilityRoutes,
   reviewsRoutes,
   stillsRoutes,
   reviewListsRoutes,

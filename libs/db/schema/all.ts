@@ -1,8 +1,9 @@
 import * as club from './club';
 import * as film from './film';
+import * as repeatability from './repeatability';
 import * as review from './review';
 import * as signIn from './sign-in';
 import * as targets from './targets';
 
 /** Every table, for the ORM's typed queries and for the migration generator. */
-export const schema = { ...club, ...signIn, ...film, ...review, ...targets };
+export const schema = { ...club, ...signIn, ...film, ...repeatability, ...review, ...targets };

@@ -9,7 +9,7 @@ import {
   text,
   uniqueIndex,
 } from 'drizzle-orm/sqlite-core';
-import { athletes } from './club';
+import { athletes, users } from './club';
 
 /** Sessions, clips with their frame index, and what a coach puts on them: strokes and marks. */
 
@@ -72,6 +72,15 @@ export const clips = sqliteTable(
     deletedAt: text(),
     /** Which version of the formulas its stroke figures were computed with; 0 = not yet. */
     figuresFormulas: integer().notNull().default(0),
+    /** Who placed most of its marks. */
+    markerId: text().references(() => users.id, { onDelete: 'set null' }),
+    /**
+     * Their own spread, standard uncertainty per coordinate in pixels of this picture; null while it is not known. Kept
+     * here, so that every reading of the clip is made with one and the same.
+     */
+    jointShoulderPx: real(),
+    jointElbowPx: real(),
+    jointWristPx: real(),
   },
   (table) => [
     index('clips_session').on(table.sessionId),

@@ -4,6 +4,17 @@ import { type Outcome, ok, refused } from '../outcome';
 /** Standard uncertainty of a placed joint, per coordinate, in pixels of the picture as shown. */
 export type JointUncertaintyPx = Readonly<Record<Joint, number>>;
 
+export interface PictureSize {
+  readonly width: number;
+  readonly height: number;
+}
+
+/** How many pixels of a picture of this size stand for one of a picture of 1080 lines; 1 for a size that is none. */
+export function pictureScale(size: PictureSize): number {
+  const shorter = Math.min(size.width, size.height);
+  return Number.isFinite(shorter) && shorter > 0 ? shorter / 1080 : 1;
+}
+
 export type JointUncertaintyReason = 'uncertainty-not-finite' | 'uncertainty-negative';
 
 /**
@@ -19,12 +30,8 @@ const FLOOR_PX = 1;
  * Default uncertainty for a picture size: grows with the shorter side, since a joint covers more pixels in a larger
  * picture. A default, replaced by the coach's own. A size that is no size counts as 1080.
  */
-export function defaultJointUncertaintyPx(size: {
-  readonly width: number;
-  readonly height: number;
-}): JointUncertaintyPx {
-  const shorter = Math.min(size.width, size.height);
-  const scale = Number.isFinite(shorter) && shorter > 0 ? shorter / 1080 : 1;
+export function defaultJointUncertaintyPx(size: PictureSize): JointUncertaintyPx {
+  const scale = pictureScale(size);
   return {
     shoulder: Math.max(FLOOR_PX, AT_1080.shoulder * scale),
     elbow: Math.max(FLOOR_PX, AT_1080.elbow * scale),

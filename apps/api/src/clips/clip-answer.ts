@@ -2,6 +2,10 @@ import type { Clip } from '@stillstroke/contract/clip-facts';
 import type { Db } from '@stillstroke/db/open';
 import { inListed, preparedOnce } from '@stillstroke/db/prepared-once';
 import { clips, marks, sessions, strokes } from '@stillstroke/db/schema/film';
+import {
+  defaultJointUncertaintyPx,
+  type JointUncertaintyPx,
+} from '@stillstroke/geometry/uncertainty/joint-uncertainty';
 import { and, asc, eq, isNull, sql, type SQL } from 'drizzle-orm';
 import { notFound } from '../platform/problem';
 
@@ -49,8 +53,22 @@ function answersWhere(db: Db, where: SQL | undefined) {
 type Found = { clip: ClipRow } & Pick<Clip, 'athleteId' | 'markedFrames' | 'strokeCount'>;
 
 function asAnswer({ clip: row, ...counted }: Found): Clip {
-  const { plumbTopX, plumbTopY, plumbBottomX, plumbBottomY, figuresFormulas: _, ...facts } = row;
-  return { ...facts, plumb: plumbOf({ plumbTopX, plumbTopY, plumbBottomX, plumbBottomY }), ...counted };
+  const { plumbTopX, plumbTopY, plumbBottomX, plumbBottomY, figuresFormulas: _, ...rest } = row;
+  const { markerId: _marker, jointShoulderPx, jointElbowPx: _elbow, jointWristPx: _wrist, ...facts } = rest;
+  return {
+    ...facts,
+    plumb: plumbOf({ plumbTopX, plumbTopY, plumbBottomX, plumbBottomY }),
+    jointUncertaintyPx: { ...jointUncertaintyOf(row) },
+    jointUncertaintyOwn: jointShoulderPx !== null,
+    ...counted,
+  };
+}
+
+/** The spread of whoever placed most of the marks, or the default for the picture's size. */
+export function jointUncertaintyOf(row: ClipRow): JointUncertaintyPx {
+  const { jointShoulderPx: shoulder, jointElbowPx: elbow, jointWristPx: wrist } = row;
+  if (shoulder === null || elbow === null || wrist === null) return defaultJointUncertaintyPx(row);
+  return { shoulder, elbow, wrist };
 }
 
 /** The plumb line of a clip's row; null where none was drawn. */

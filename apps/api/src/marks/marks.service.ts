@@ -5,9 +5,12 @@ import type { Db } from '@stillstroke/db/open';
 import { preparedOnce } from '@stillstroke/db/prepared-once';
 import { marks } from '@stillstroke/db/schema/film';
 import { and, asc, eq, sql } from 'drizzle-orm';
-import { refreshFiguresAt } from '../measures/figures';
+import type { ClipRow } from '../clips/clip-answer';
+import { clipRow } from '../measures/clip-reading';
+import { refreshClipFigures, refreshFiguresAt } from '../measures/figures';
 import type { AppContext } from '../platform/context';
 import { changedMeanwhile, notFound } from '../platform/problem';
+import { settleMarker, settleMarkerAfter } from '../repeatability/marker';
 import { liveClip } from '../sessions/live-film';
 import { markAnswer } from './mark-answer';
 import { checkFrame, checkJoints, markColumns } from './mark-rules';
@@ -62,8 +65,7 @@ export function putMark(
         })
         .returning()
         .get();
-      refreshFiguresAt(tx, clip.id, place.arm, place.frame);
-      return markAnswer(row, clip);
+      return markAnswer(row, refreshReadings(tx, clip, place, settleMarkerAfter(tx, clip, user.id)));
     },
     { behavior: 'immediate' },
   );
@@ -84,10 +86,22 @@ export function deleteMark(
       if (version !== undefined && version !== there.version)
         throw changedMeanwhile('mark', markAnswer(there, clip));
       tx.delete(marks).where(at(clip.id, place)).run();
-      refreshFiguresAt(tx, clip.id, place.arm, place.frame);
+      refreshReadings(tx, clip, place, settleMarker(tx, clip.id));
     },
     { behavior: 'immediate' },
   );
+}
+
+type Writer = Pick<Db, 'select' | 'insert' | 'delete' | 'update'>;
+
+/** What was kept of the strokes that the mark belongs to, or of all when the clip is read with another's spread now. */
+function refreshReadings(tx: Writer, clip: ClipRow, { arm, frame }: Place, allOfThem: boolean): ClipRow {
+  if (!allOfThem) {
+    refreshFiguresAt(tx, clip.id, arm, frame);
+    return clip;
+  }
+  refreshClipFigures(tx, clip.id);
+  return clipRow(tx, clip.id) ?? clip;
 }
 
 const at = (clipId: string, { arm, frame }: Place) =>

@@ -5,9 +5,8 @@ import type { FrameMark } from '@stillstroke/geometry/arm';
 import type { StrokeEvents } from '@stillstroke/geometry/events/stroke';
 import type { ReadingContext } from '@stillstroke/geometry/measures/reading-context';
 import { strokeMeasures, type StrokeMeasures } from '@stillstroke/geometry/measures/stroke-measures';
-import { defaultJointUncertaintyPx } from '@stillstroke/geometry/uncertainty/joint-uncertainty';
 import { and, asc, eq, sql } from 'drizzle-orm';
-import { plumbOf, type ClipRow } from '../clips/clip-answer';
+import { jointUncertaintyOf, plumbOf, type ClipRow } from '../clips/clip-answer';
 import { frameTimes } from '../media/frame-blobs';
 
 export type StrokeRow = typeof strokes.$inferSelect;
@@ -53,7 +52,7 @@ export function readingContext(clip: ClipRow): ReadingContext {
   return {
     plumb: plumbOf(clip),
     travel: clip.travel,
-    jointUncertaintyPx: defaultJointUncertaintyPx(clip),
+    jointUncertaintyPx: jointUncertaintyOf(clip),
     captureRateFactor: clip.captureRateFactor,
   };
 }
