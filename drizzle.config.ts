@@ -7,6 +7,7 @@ export default defineConfig({
     './libs/db/schema/club.ts',
     './libs/db/schema/sign-in.ts',
     './libs/db/schema/film.ts',
+    './libs/db/schema/repeatability.ts',
     './libs/db/schema/review.ts',
     './libs/db/schema/targets.ts',
   ],

@@ -4,6 +4,7 @@ import { placeTarget } from '../../apps/api/src/targets/test-targets';
 import { issueInvitation } from '../../apps/api/src/invitations/issue';
 import { placeClip, placeSession } from '../../apps/api/src/media/test-films';
 import { emailOf, testPassword, type ClubIds, type TestClub } from '../../apps/api/src/platform/test-club';
+import { placeRoundThings, roundRoutes, type RoundThings } from './round-routes';
 import { placeReviewThings, reviewRoutes, type ReviewThings } from './review-routes';
 
 /**
@@ -28,7 +29,7 @@ export const callers = [
 export type Caller = (typeof callers)[number];
 
 /** What is there when a route is tried. */
-export interface Things extends ClubIds, ReviewThings {
+export interface Things extends ClubIds, ReviewThings, RoundThings {
   readonly sessionId: string;
   readonly clipId: string;
   readonly strokeId: string;
@@ -94,7 +95,16 @@ export function placeThings(club: TestClub): Things {
     .run();
   const targetId = placeTarget(context, ids.athletes.own);
   const { token } = issueInvitation(context.db, context.now(), ids.users.guardian);
-  return { ...ids, ...placeReviewThings(club), sessionId, clipId, strokeId, targetId, token };
+  return {
+    ...ids,
+    ...placeReviewThings(club),
+    ...placeRoundThings(club, clipId),
+    sessionId,
+    clipId,
+    strokeId,
+    targetId,
+    token,
+  };
 }
 
 /** Everybody who is signed in. */
@@ -322,6 +332,7 @@ export const routes: readonly RouteRow[] = [
     statuses: change(204),
   },
 
+  ...roundRoutes,
   ...reviewRoutes,
   ...(['clips', 'sessions', 'athletes'] as const).map((of) => ({
     route: `get /api/${of}/:id/export`,

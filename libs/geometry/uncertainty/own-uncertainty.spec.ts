@@ -1,6 +1,12 @@
 import { describe, expect, it } from 'vitest';
 import { onFrame, reasonOf, valueOf } from '../testing/arms';
-import { anglesTwice, ownRepeatability, ownUncertaintyPx, type PlacedTwice, typicalErrors } from './own-uncertainty';
+import {
+  anglesTwice,
+  ownRepeatability,
+  ownUncertaintyPx,
+  type PlacedTwice,
+  typicalErrors,
+} from './own-uncertainty';
 
 const axes = { travel: 'right', plumb: null } as const;
 const size = { width: 1920, height: 1080 };
@@ -24,7 +30,7 @@ describe('a coach’s own spread', () => {
   it('counts pixels of a picture of 1080 lines, whatever the film had', () => {
     const large = { size: { width: 2160, height: 3840 } };
     const found = valueOf(ownRepeatability([placed(4, 0, large), placed(4, 0, large)]));
-    expect(found.jointUncertaintyPx.wrist).toBeCloseTo(Math.sqrt(2 * (2 ** 2 / 2) / 4), 12);
+    expect(found.jointUncertaintyPx.wrist).toBeCloseTo(Math.sqrt((2 * (2 ** 2 / 2)) / 4), 12);
     expect(ownUncertaintyPx(large.size, { shoulder: 3, elbow: 2, wrist: 0.01 })).toEqual({
       shoulder: 6,
       elbow: 4,

@@ -8,6 +8,7 @@ import { and, eq, inArray } from 'drizzle-orm';
 import type { ClipRow } from '../clips/clip-answer';
 import { checkFrame, checkJoints, markColumns } from '../marks/mark-rules';
 import { refreshClipFigures } from '../measures/figures';
+import { settleMarker } from '../repeatability/marker';
 import { HttpProblem } from '../platform/problem';
 import { checkEvents, checkNoOverlap } from '../strokes/stroke-rules';
 import { strokeColumns } from '../strokes/stroke-answer';
@@ -37,6 +38,7 @@ export function writeClip(
   writeSetUp(tx, from, to, choice);
   writeStrokes(tx, to, plan, choice, stamp);
   writeMarks(tx, { ...to, travel: from.travel }, plan, choice, stamp);
+  settleMarker(tx, to.id);
   refreshClipFigures(tx, to.id);
 }
 
