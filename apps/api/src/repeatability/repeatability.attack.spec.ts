@@ -30,8 +30,9 @@ describe('attacks on rounds of marking again', () => {
   it('reach nobody but the coach whose round it is', async () => {
     const mayNot = { athlete: 403, otherAthlete: 403, guardian: 403, foreignAthlete: 403 };
     const own = { ...mayNot, coach: 200 };
+    // Reading what is for others looks the same as reading what is not there.
     const path = `/api/marking-rounds/${round.id}`;
-    await tryAsEverybody(club, { method: 'get', path, answers: own });
+    await tryAsEverybody(club, { method: 'get', path, answers: { coach: 200 } });
     await tryAsEverybody(club, { method: 'put', path: `${path}/marks/0`, body: joints, answers: own });
     await tryAsEverybody(club, { method: 'delete', path, answers: { ...mayNot, coach: 204 } });
     const onClip = { ...mayNot, admin: 201, coach: 201 };
@@ -58,15 +59,9 @@ describe('attacks on rounds of marking again', () => {
       const answer = await coach.mutate('put', `${path}/0`).type('json').send(body);
       expect([body, answer.status]).toEqual([body, 400]);
     }
-    for (const [position, status] of [
-      ['-1', 400],
-      ['x', 400],
-      ['1.5', 400],
-      ['99999', 400],
-      ['3', 404],
-    ] as const) {
+    for (const position of ['-1', 'x', '1.5', '99999', '3']) {
       const answer = await coach.mutate('put', `${path}/${position}`).send(joints);
-      expect([position, answer.status]).toEqual([position, status]);
+      expect([position, answer.status]).toEqual([position, 404]);
     }
     for (const frames of [0, 2, 41, 1.5, '3', null]) {
       const answer = await coach.mutate('post', `/api/clips/${clipId}/marking-rounds`).send({ frames });
