@@ -35,6 +35,8 @@ export function madeClip(more: Partial<Clip> = {}): Clip {
     container: 'mp4',
     sizeBytes: 38_400_000,
     sha256: 'f'.repeat(64),
+    jointUncertaintyPx: { shoulder: 3, elbow: 2, wrist: 2 },
+    jointUncertaintyOwn: false,
     cutOff: false,
     hasPoster: false,
     markedFrames: 0,

@@ -6,10 +6,7 @@ import type { FrameMark } from '@stillstroke/geometry/arm';
 import type { ReadingContext } from '@stillstroke/geometry/measures/reading-context';
 import { strokeMeasures, type StrokeMeasures } from '@stillstroke/geometry/measures/stroke-measures';
 import { ok, refused, type Outcome } from '@stillstroke/geometry/outcome';
-import {
-  armAngleUncertainty,
-  defaultJointUncertaintyPx,
-} from '@stillstroke/geometry/uncertainty/arm-uncertainty';
+import { armAngleUncertainty } from '@stillstroke/geometry/uncertainty/arm-uncertainty';
 import type { ArmReading } from '../readings/arm-reading';
 import { isComplete, type CompleteMark, type DeskMark } from './desk-mark';
 import { isWhole, lastFrameOf, type CompleteStroke, type DeskStroke } from './desk-stroke';
@@ -74,12 +71,13 @@ interface Remembered {
   readonly measures: StrokeMeasures;
 }
 
-function readingContext({ travel, plumb, width, height, captureRateFactor }: Clip): ReadingContext {
+function readingContext({ travel, plumb, captureRateFactor, jointUncertaintyPx }: Clip): ReadingContext {
   return {
     travel,
     plumb,
     captureRateFactor,
-    jointUncertaintyPx: defaultJointUncertaintyPx({ width, height }),
+    // As the server has them: whose marks they are decides, and both must read alike.
+    jointUncertaintyPx,
   };
 }
 

@@ -25,6 +25,8 @@ export const testClip: Clip = {
   container: 'mp4',
   sizeBytes: 1_000_000,
   sha256: '0'.repeat(64),
+  jointUncertaintyPx: { shoulder: 2, elbow: 4 / 3, wrist: 4 / 3 },
+  jointUncertaintyOwn: false,
   cutOff: false,
   hasPoster: true,
   markedFrames: 12,
