@@ -9,6 +9,9 @@ import { strokeRate } from '@stillstroke/geometry/events/stroke-rate';
 import { verticalAt } from '@stillstroke/geometry/events/vertical-at';
 import { strokeMeasures } from '@stillstroke/geometry/measures/stroke-measures';
 import { compareArms } from '@stillstroke/geometry/statistics/compare-arms';
+import { compareTogether } from '@stillstroke/geometry/statistics/compare-measures';
+import { compareWithin } from '@stillstroke/geometry/statistics/compare-within';
+import { t95 } from '@stillstroke/geometry/statistics/distributions';
 import { armOf, constantRate, valueOf } from '@stillstroke/geometry/testing/arms';
 import { sessionChange } from '@stillstroke/geometry/trend/change';
 import { sessionMean } from '@stillstroke/geometry/trend/session-mean';
@@ -221,6 +224,32 @@ describe('timing', () => {
     );
   });
 
+  it('pull and push, divided by a mid-pull that is computed from marks', () => {
+    const random = seededRandom(33);
+    const pushes: boolean[] = [];
+    const coverage = covers('pull, mid-pull from jittered marks', STROKES, () => {
+      const pull = truePull(random);
+      const truth = marksOf(pull.at, EVERY);
+      const trueMid = valueOf(midPull(STROKE, truth, times, { ...context(random), plumb: null }));
+      const marks = truth.map((mark) => jittered(mark, random));
+      const mid = midPull(STROKE, marks, times, context(random));
+      if (!mid.ok) return null;
+      const phases = valueOf(strokePhases(STROKE, mid.value, times));
+      // The true events lie anywhere within one frame of those chosen; the arm's own mid-pull stays where it is.
+      const off = () => random.between(-1, 1) * FRAME_US;
+      const at = (frame: number) => (times[frame] ?? 0) + off();
+      const [entry, caught, exit, next] = [at(10), at(30), at(70), at(94)];
+      const share = (from: number, to: number) => (to - from) / (next - entry);
+      if (!phases.pull || !phases.push) return null;
+      pushes.push(holds(phases.push.interval, share(trueMid.timeUs, exit)));
+      return holds(phases.pull.interval, share(caught, trueMid.timeUs));
+    });
+    expectHonest(coverage);
+    expectHonest(
+      covers('push, mid-pull from jittered marks', pushes.length, (trial) => pushes[trial] ?? null),
+    );
+  });
+
   it('phases where events are chosen within a frame, at a variable rate', () => {
     const random = seededRandom(32);
     const coverage = covers('phases, variable rate', TRIALS, () => {
@@ -292,6 +321,68 @@ describe('left against right, and over time', () => {
       );
       expect(share, measure).toBeLessThanOrEqual(0.05 + 2 * Math.sqrt((0.05 * 0.95) / trials));
     }
+  });
+
+  it('mean of a session, where marking is all there is and where strokes differ', () => {
+    const random = seededRandom(43);
+    const count = 5;
+    const marked = covers('session mean, equal strokes marked with 2°', TRIALS, () => {
+      const lean = 0.7 * random.normal();
+      const values = Array.from({ length: count }, () => 10 + lean + 2 * random.normal());
+      const { mean, marking, setUp } = valueOf(sessionMean(values, { marking: 2, setUp: 0.7 }));
+      expect(marking).toBeGreaterThanOrEqual(setUp);
+      return holds(normalInterval(mean, marking), 10);
+    });
+    expectHonest(marked);
+    const differing = covers('session mean, strokes 3° apart', TRIALS, () => {
+      const { mean, sd } = valueOf(sessionMean(strokes(random, count, 10), { marking: 2, setUp: 0 }));
+      const half = (t95(count - 1) * (sd ?? 0)) / Math.sqrt(count);
+      return holds({ low: mean - half, high: mean + half }, 10);
+    });
+    expectHonest(differing);
+  });
+
+  it('names no difference in nineteen sessions of twenty however many measures are looked at', () => {
+    const random = seededRandom(44);
+    const names = ['a', 'b', 'c', 'd', 'e', 'f', 'g', 'h'] as const;
+    let any = 0;
+    let alone = 0;
+    for (let trial = 0; trial < STROKES; trial += 1) {
+      const one = () => valueOf(compareArms(strokes(random, 5, 10), strokes(random, 6, 10), marking));
+      const each = Object.fromEntries(names.map((name) => [name, one()])) as Record<
+        (typeof names)[number],
+        ReturnType<typeof one>
+      >;
+      const named = ({ verdict }: { verdict: string }) => verdict.endsWith('-larger');
+      if (Object.values(each).some(named)) alone += 1;
+      if (Object.values(compareTogether(each)).some(named)) any += 1;
+    }
+    const share = any / STROKES;
+    table.push(`${'any wrong verdict among eight measures'.padEnd(46)} ${(100 * share).toFixed(2)} %`);
+    table.push(
+      `${'  the same without Holm’s correction'.padEnd(46)} ${((100 * alone) / STROKES).toFixed(2)} %`,
+    );
+    expect(share).toBeLessThanOrEqual(0.05 + 2 * Math.sqrt((0.05 * 0.95) / STROKES));
+    // What the correction is for: without it the same strokes give many more.
+    expect(alone / STROKES).toBeGreaterThan(0.2);
+  });
+
+  it('breathing strokes against the others, both arms together', () => {
+    const random = seededRandom(45);
+    let wrong = 0;
+    const coverage = covers('breathing − others, both arms', TRIALS, () => {
+      const arm = (mean: number) => ({
+        one: strokes(random, 4, mean),
+        other: strokes(random, 5, mean),
+        oneMarking: [2, 2, 2, 2],
+        otherMarking: [2, 2, 2, 2, 2],
+      });
+      const compared = valueOf(compareWithin([arm(10), arm(16)]));
+      if (compared.verdict.endsWith('-larger')) wrong += 1;
+      return compared.interval && holds(compared.interval, 0);
+    });
+    expectHonest(coverage);
+    expect(wrong / TRIALS).toBeLessThanOrEqual(0.05 + 2 * Math.sqrt((0.05 * 0.95) / TRIALS));
   });
 
   it('change between two sessions, and the slope of several', () => {

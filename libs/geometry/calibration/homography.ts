@@ -1,5 +1,5 @@
 import { type Outcome, ok, refused } from '../outcome';
-import type { VideoPoint } from '../points/video-point';
+import { checkPoint, type VideoPoint } from '../points/video-point';
 import { leastSquares } from './linear-solve';
 
 /** A point on a plane in the world, metres. */
@@ -34,8 +34,8 @@ export type HomographyReason = 'not-finite' | 'too-few-points' | 'points-in-line
  */
 export function homography(pairs: readonly PointPair[]): Outcome<Homography, HomographyReason> {
   if (pairs.length < 4) return refused('too-few-points');
-  const all = pairs.flatMap(({ picture, plane }) => [picture.x, picture.y, plane.x, plane.y]);
-  if (!all.every(Number.isFinite)) return refused('not-finite');
+  const usable = pairs.every(({ picture, plane }) => checkPoint(picture).ok && checkPoint(plane).ok);
+  if (!usable) return refused('not-finite');
   const from = normaliser(pairs.map(({ picture }) => picture));
   const to = normaliser(pairs.map(({ plane }) => plane));
   if (!from || !to) return refused('points-in-line');

@@ -78,6 +78,7 @@ export function rollUncertaintyDeg(
   const roll = cameraRoll(plumb);
   if (!roll.ok) return roll;
   if (roll.value.lengthPx === null) return ok(ASSUMED_ROLL_UNCERTAINTY_DEG as Degrees);
+  if (!(endPointUncertaintyPx >= 0 && endPointUncertaintyPx < Infinity)) return refused('plumb-not-finite');
   return ok(toDegrees(((Math.SQRT2 * endPointUncertaintyPx) / roll.value.lengthPx) as Radians));
 }
 

@@ -23,7 +23,7 @@ export interface FlatPortView {
 export function flatPort(waterDeg: number, index = WATER_INDEX): Outcome<FlatPortView, 'outside-view'> {
   const water = (waterDeg * Math.PI) / 180;
   const s = index * Math.sin(water);
-  if (!(waterDeg >= 0 && s < 1 && index >= 1)) return refused('outside-view');
+  if (!(waterDeg >= 0 && waterDeg < 90 && s < 1 && index >= 1)) return refused('outside-view');
   const t = Math.tan(water);
   const stretch = 1 / (1 - (index * index - 1) * t * t);
   const radius = index * t * Math.sqrt(stretch);

@@ -1,5 +1,6 @@
 import type { ArmMark, Joint } from '../arm';
 import { type Outcome, ok, refused } from '../outcome';
+import { checkPoint } from '../points/video-point';
 import type { JointUncertaintyPx } from '../uncertainty/joint-uncertainty';
 import { Z95 } from './normal';
 import { meanOf, sumOfSquares, total } from './sample';
@@ -40,6 +41,8 @@ export interface MarkingRepeatability {
 export function markingRepeatability(
   frames: readonly (readonly ArmMark[])[],
 ): Outcome<MarkingRepeatability, RepeatabilityReason> {
+  const all = frames.flat().flatMap(({ shoulder, elbow, wrist }) => [shoulder, elbow, wrist]);
+  if (!all.every((point) => checkPoint(point).ok)) return refused('not-finite');
   const spread = (joint: Joint): Outcome<PooledSpread, RepeatabilityReason> =>
     pooledSpread(
       frames.flatMap((marks) => [marks.map((mark) => mark[joint].x), marks.map((mark) => mark[joint].y)]),

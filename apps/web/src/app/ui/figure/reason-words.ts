@@ -63,6 +63,9 @@ const words: Readonly<Record<string, string>> = {
   'outside-picture': 'a point lies outside the picture; place it again',
   'beyond-the-plane': 'the marked plane does not reach that far',
   'outside-view': 'that angle lies outside what a flat port shows',
+  'no-distance': 'say the distance swum first',
+  'distance-not-told': 'say the distance swum first',
+  'distance-frames-out-of-order': 'the end of the distance must come after its start',
   singular: 'the points do not determine an answer; place them farther apart',
 };
 
