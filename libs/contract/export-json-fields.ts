@@ -64,6 +64,10 @@ export const jsonFields: readonly JsonField[] = [
     `${clip}.timesUs[]`,
     'Presentation time of every frame, microseconds, so that all figures can be computed again',
   ),
+  field(
+    `${clip}.jointUncertaintyOwn`,
+    'Whether that was found by marking again, by whoever placed most of the marks',
+  ),
   field(`${stroke}.id`, 'The stroke'),
   field(`${stroke}.arm`, 'left or right'),
   field(`${stroke}.entry`, 'Frame of the entry'),

@@ -54,6 +54,7 @@ import { sessionMean } from '@stillstroke/geometry/trend/session-mean';
 import { slopeOf } from '@stillstroke/geometry/trend/slope';
 import { armAngleUncertainty } from '@stillstroke/geometry/uncertainty/arm-uncertainty';
 import { checkJointUncertainty } from '@stillstroke/geometry/uncertainty/joint-uncertainty';
+import { ownRepeatability, typicalErrors } from '@stillstroke/geometry/uncertainty/own-uncertainty';
 import { degrees, radians } from '@stillstroke/geometry/units/angle';
 import { frameIndex } from '@stillstroke/geometry/units/frame-index';
 import { microseconds } from '@stillstroke/geometry/units/microseconds';
@@ -116,6 +117,13 @@ const measures = strokeMeasures(stroke, marks, times, context);
 const sessionOf = (values: readonly number[]) => valueOf(sessionMean(values, { marking: 1, setUp: 0.5 }));
 const points = [0, 30, 60, 95].map((x, n) => ({ x, y: 50 - n * 3 + (n % 2), uncertainty: 1 + n / 10 }));
 const fieldOfView = { deg: 60, medium: 'water' as const };
+const again = armOf({ upperArmDeg: 61, forearmDeg: 21 });
+const placedTwice = [0, 1, 2].map(() => ({
+  size: picture,
+  axes: { travel: 'right' as const, plumb },
+  first: mark,
+  again,
+}));
 const twice = [mark, armOf({ upperArmDeg: 61, forearmDeg: 21 })];
 
 /** Where people's input comes in: each is tried with everything that can be wrong with it. */
@@ -139,9 +147,7 @@ export const doors: readonly Door[] = [
   door('calibration/quad.checkQuad', (...four: Quad) => checkQuad(four), ...corners),
   door('calibration/refraction.flatPort', flatPort, 10),
   door('calibration/refraction.waterAngle', waterAngle, 0.2),
-  door('events/coordination.indexOfCoordination', indexOfCoordination, arms, times, {
-    captureRateFactor: 1,
-  }),
+  door('events/coordination.indexOfCoordination', indexOfCoordination, arms, times),
   door('events/elbow-at-mid-pull.elbowAtMidPull', elbowAtMidPull, stroke, marks, times, context),
   door('events/frame-times.frameTimeUs', frameTimeUs, times, 12),
   door('events/mid-pull.midPull', midPull, stroke, marks, times, context),
@@ -193,6 +199,8 @@ export const doors: readonly Door[] = [
     checkJointUncertainty,
     context.jointUncertaintyPx,
   ),
+  door('uncertainty/own-uncertainty.ownRepeatability', ownRepeatability, placedTwice),
+  door('uncertainty/own-uncertainty.typicalErrors', typicalErrors, placedTwice),
   door('units/angle.degrees', degrees, 3),
   door('units/angle.radians', radians, 3),
   door('units/frame-index.frameIndex', frameIndex, 3, 10),

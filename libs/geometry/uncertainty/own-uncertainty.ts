@@ -1,6 +1,7 @@
 import type { ArmMark } from '../arm';
 import { armAngles, type ClipAxes, signedElbow } from '../angles/arm-angles';
 import { type Outcome, ok, refused } from '../outcome';
+import { checkPoint } from '../points/video-point';
 import {
   markingRepeatability,
   type MarkingRepeatability,
@@ -31,6 +32,9 @@ export interface PlacedTwice {
 export function ownRepeatability(
   placed: readonly PlacedTwice[],
 ): Outcome<MarkingRepeatability, RepeatabilityReason> {
+  const all = placed.flatMap(({ first, again }) => [first, again]);
+  const points = all.flatMap(({ shoulder, elbow, wrist }) => [shoulder, elbow, wrist]);
+  if (!points.every((point) => checkPoint(point).ok)) return refused('not-finite');
   return markingRepeatability(
     placed.map(({ size, first, again }) => {
       const scale = pictureScale(size);
