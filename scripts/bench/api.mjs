@@ -105,15 +105,18 @@ async function timeLargeClub(dataFolder) {
   const product = await startProduct({ dataFolder, port: ports.product });
   const headers = await signIn(product.base, 'coach@tarnvalley.example', 'stillwater-demo');
   const rows = [];
+  const listed = await fetch(`${product.base}/api/athletes/${athleteId}/sessions?limit=1`, { headers });
+  const sessionId = (await listed.json()).items[0].id;
   for (const path of [
     '/api/athletes?limit=50',
     '/api/athletes?limit=50&sort=lastSession&direction=desc',
     `/api/athletes/${athleteId}/sessions`,
     `/api/athletes/${athleteId}/trend?measure=verticalAt`,
+    `/api/sessions/${sessionId}/comparison`,
   ]) {
     const times = await timeRequests(`${product.base}${path}`, headers);
     rows.push({
-      path: path.replace(athleteId, ':id'),
+      path: path.replace(athleteId, ':id').replace(sessionId, ':id'),
       ...times,
       'ratio to the bare query': Number((times.median / bare).toFixed(1)),
     });

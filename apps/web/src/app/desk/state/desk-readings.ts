@@ -82,7 +82,11 @@ function readingContext({ travel, plumb, captureRateFactor, jointUncertaintyPx }
 }
 
 function sameContext(a: ReadingContext, b: ReadingContext): boolean {
-  return a.travel === b.travel && a.plumb === b.plumb && a.captureRateFactor === b.captureRateFactor;
+  const [was, is] = [a.jointUncertaintyPx, b.jointUncertaintyPx];
+  const sameSpread = was.shoulder === is.shoulder && was.elbow === is.elbow && was.wrist === is.wrist;
+  return (
+    a.travel === b.travel && a.plumb === b.plumb && a.captureRateFactor === b.captureRateFactor && sameSpread
+  );
 }
 
 function sortOut(marks: ReadonlyMap<string, DeskMark>): Record<Arm, readonly CompleteMark[]> {
