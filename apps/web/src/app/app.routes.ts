@@ -44,6 +44,25 @@ export const routes: Routes = [
     loadChildren: () => import('./session/session.routes'),
   },
   {
+    path: 'clips/:clipId/mark-again',
+    title: 'Mark again',
+    canActivate: [onlyFor('coach', 'admin')],
+    loadComponent: () => import('./mark-again/start-page').then(({ StartPage }) => StartPage),
+  },
+  {
+    path: 'marking-rounds/:roundId',
+    title: 'Mark again',
+    canActivate: [onlyFor('coach', 'admin')],
+    data: { fullPage: true },
+    loadComponent: () => import('./mark-again/round-page').then(({ RoundPage }) => RoundPage),
+  },
+  {
+    path: 'marking',
+    title: 'Your marking',
+    canActivate: [onlyFor('coach', 'admin')],
+    loadComponent: () => import('./mark-again/marking-page').then(({ MarkingPage }) => MarkingPage),
+  },
+  {
     path: 'clips/:clipId',
     title: 'Desk',
     canActivate: [signedIn],

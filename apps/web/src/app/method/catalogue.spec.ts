@@ -19,6 +19,8 @@ const statistics = [
   'change',
   'slope',
   'robustSlope',
+  'repeatability',
+  'agreement',
   'curves',
 ];
 

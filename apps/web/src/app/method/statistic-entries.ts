@@ -225,6 +225,48 @@ export const statisticEntries = {
     sources: [{ source: 'sen1968', where: 'the estimate' }],
     limits: ['All sessions count alike, however uncertain.'],
   },
+  repeatability: {
+    name: 'How closely a coach repeats a mark',
+    kind: 'statistic',
+    what: 'The coach’s own spread of placing joints, found by marking frames again without seeing the first marks.',
+    steps: [
+      'Take every frame that the same coach has marked twice, at pixels of a picture of 1080 lines.',
+      'For each joint add the squared distances of both marks from their middle, x and y together, over all frames; divide by twice the number of frames; take the root. That is the spread of one placing.',
+      'It stands in the uncertainties of every clip that this coach has marked most of, from ten frames on; before that the default stands.',
+      'The typical error of an angle is the standard deviation of the differences of the two readings, over √2. Two single readings have to differ by 1.96·√2 of it before marking cannot explain it.',
+    ],
+    written: 'u² = Σ (x − x̄)²/(2n); typical error = SD of d/√2',
+    unit: 'pixels at 1080 lines; degrees',
+    interval: 'With ten frames the spread itself is known to about a sixth.',
+    sources: [
+      { source: 'hopkins2000', where: 'typical error' },
+      { source: 'weir2005', where: 'the smallest change that can be detected' },
+      { source: 'ownChoice', where: 'ten frames, and one spread for each clip' },
+    ],
+    limits: [
+      'A coach who places a joint in the wrong place twice repeats it well: it is no check against the truth.',
+      'Marks made again on the same day may be closer than those of another month.',
+    ],
+  },
+  agreement: {
+    name: 'How two coaches agree',
+    kind: 'statistic',
+    what: 'The differences between two coaches’ readings of the same frames.',
+    steps: [
+      'On every frame that both have marked, take the first coach’s angle less the second’s.',
+      'Their mean is the steady difference, with a 95 % interval from Student’s t.',
+      'The limits are the mean and 1.96 standard deviations to either side: 95 of 100 single differences are expected between them. Each limit has its own interval, with standard error √(3·SD²/n).',
+    ],
+    written: 'd̄ ± 1.96·SD',
+    unit: 'degrees',
+    sign: 'Plus: the first coach reads more.',
+    interval: 'Beside the mean: 95 % of that mean. Beside a limit: 95 % of that limit.',
+    sources: [{ source: 'blandAltman1986', where: 'bias and limits; 1.96 where the paper writes 2' }],
+    limits: [
+      'With fewer than three frames nothing is said, and with few the limits are wide open.',
+      'It does not say which of the two is right.',
+    ],
+  },
   curves: {
     name: 'Curves over the pull',
     kind: 'statistic',

@@ -1,10 +1,11 @@
-import { ChangeDetectionStrategy, Component, computed, input, output } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, inject, input, output } from '@angular/core';
 import { MatButtonModule } from '@angular/material/button';
 import { MatMenuModule } from '@angular/material/menu';
 import { RouterLink } from '@angular/router';
 import type { Clip } from '@stillstroke/contract/clip-facts';
 import { getClipPoster } from '@stillstroke/contract/clips';
 import { endpointUrl } from '../core/api/endpoint-url';
+import { SignInState } from '../core/sign-in/sign-in-state';
 import { factsOf, sayMeasured, sayView } from '../ui/clip-words';
 import { PlumbSign } from '../ui/plumb-sign';
 
@@ -18,6 +19,8 @@ import { PlumbSign } from '../ui/plumb-sign';
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class ClipCard {
+  private readonly signIn = inject(SignInState);
+
   readonly clip = input.required<Clip>();
   readonly canChange = input(false);
 
@@ -30,5 +33,9 @@ export class ClipCard {
   protected readonly shows = computed(() => sayView(this.clip()));
   protected readonly facts = computed(() => factsOf(this.clip()).join(' · '));
   protected readonly measured = computed(() => sayMeasured(this.clip()));
+  /** For those who mark, not for an athlete who has sent the clip in. */
+  protected readonly canMarkAgain = computed(
+    () => this.ready() && this.clip().markedFrames > 0 && this.signIn.user()?.role !== 'athlete',
+  );
   protected readonly ready = computed(() => this.clip().status === 'ready');
 }

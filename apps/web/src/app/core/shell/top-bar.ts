@@ -39,6 +39,9 @@ export class TopBar {
     destinationsOf(this.user()).map((to) => ({ ...to, here: liesIn(to, this.url(), this.user()) })),
   );
 
+  /** Those who place marks. */
+  protected readonly marks = computed(() => ['coach', 'admin'].includes(this.user()?.role ?? ''));
+
   protected closeMenu(): void {
     this.menu()?.nativeElement.hidePopover();
   }

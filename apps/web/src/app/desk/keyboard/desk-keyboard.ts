@@ -1,9 +1,15 @@
 import { DestroyRef, DOCUMENT, inject, Injectable } from '@angular/core';
 import { MatDialog } from '@angular/material/dialog';
 import { runCommand, type CommandParts } from './desk-commands';
+import type { KeyCommand } from './desk-keys';
 import { belongsToControl, findKey } from './find-key';
 import { KeyChoice } from './key-choice';
 import { KeysDialog } from './keys-dialog';
+
+export interface AttachedParts extends Omit<CommandParts, 'showKeys' | 'leaveStage'> {
+  /** Takes a command over, where only a part of the Desk is there: true when it is dealt with, also by doing nothing. */
+  readonly instead?: (command: KeyCommand) => boolean;
+}
 
 /** Listens for the Desk's keys on the whole page and runs their commands. One per Desk. */
 @Injectable()
@@ -11,7 +17,7 @@ export class DeskKeyboard {
   private readonly document = inject(DOCUMENT);
   private readonly dialog = inject(MatDialog);
   private readonly choice = inject(KeyChoice);
-  private parts: Omit<CommandParts, 'showKeys' | 'leaveStage'> | null = null;
+  private parts: AttachedParts | null = null;
 
   constructor() {
     const press = (event: KeyboardEvent) => this.press(event);
@@ -28,7 +34,7 @@ export class DeskKeyboard {
     });
   }
 
-  attach(parts: Omit<CommandParts, 'showKeys' | 'leaveStage'>): void {
+  attach(parts: AttachedParts): void {
     this.parts = parts;
   }
 
@@ -48,7 +54,9 @@ export class DeskKeyboard {
     });
     if (!command) return;
     const leaveStage = () => onStage && (focused as HTMLElement).blur();
-    const handled = runCommand(command, { ...this.parts, showKeys: () => this.showKeys(), leaveStage });
+    const handled = this.parts.instead?.(command)
+      ? true
+      : runCommand(command, { ...this.parts, showKeys: () => this.showKeys(), leaveStage });
     if (handled) event.preventDefault();
   }
 }

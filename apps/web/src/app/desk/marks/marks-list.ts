@@ -1,4 +1,5 @@
 import { ChangeDetectionStrategy, Component, computed, input, signal } from '@angular/core';
+import { RouterLink } from '@angular/router';
 import type { Joint } from '@stillstroke/geometry/arm';
 import { formatFigure } from '../../ui/figure/format-figure';
 import { jointsInOrder, markKey, type DeskMark } from '../state/desk-mark';
@@ -8,6 +9,7 @@ import { capital } from '../state/marking';
 /** Every mark as a table: what the canvas draws, to be read, corrected, gone to and removed without it. */
 @Component({
   selector: 'st-marks-list',
+  imports: [RouterLink],
   templateUrl: './marks-list.html',
   styleUrl: './marks-list.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
