@@ -77,16 +77,17 @@ test('marking again changes how far the readings can be trusted', async ({ page 
   });
 
   await test.step('shows ten frames in random order without their marks, and keeps what is marked', async () => {
-    const frames: number[] = [];
-    for (let position = 0; position < 10; position++) {
+    const id = /marking-rounds\/([^?]+)/.exec(page.url())?.[1] ?? '';
+    const round = (await callApi(page, 'GET', `/api/marking-rounds/${id}`)).body as {
+      marks: { arm: string; frame: number }[];
+    };
+    expect(round.marks).toHaveLength(10);
+    for (const [position, { arm, frame }] of round.marks.entries()) {
       await expect(page.locator('header .place')).toHaveText(`Frame ${position + 1} of 10`);
-      const arm = /^(Left|Right)/.exec(await page.locator('footer .arm').innerText())?.[1]?.toLowerCase();
-      await expect(page.locator('st-stage .caption strong')).toHaveText(/Frame \d+/);
-      const frame = await desk.frame();
-      frames.push(frame);
+      await expect(page.locator('footer .arm')).toContainText(new RegExp(`${arm} arm`, 'i'));
+      await desk.shows(frame);
       const first = before.find((mark) => mark.arm === arm && mark.frame === frame);
       if (!first) throw new Error(`${arm} ${frame} was not marked`);
-      await desk.shows(frame);
       const way = position % 2 === 0 ? OFF : -OFF;
       for (const [joint, dx] of [
         [first.shoulder, way],
@@ -106,7 +107,6 @@ test('marking again changes how far the readings can be trusted', async ({ page 
         await page.keyboard.press('n');
       }
     }
-    expect([...frames].sort((a, b) => a - b)).not.toEqual(frames);
   });
 
   await test.step('says how closely the marks repeat', async () => {

@@ -1,7 +1,8 @@
-import { computed } from '@angular/core';
+import { computed, signal } from '@angular/core';
 import type { Clip } from '@stillstroke/contract/clip-facts';
 import type { Joints, MarkingRoundWithMarks } from '@stillstroke/contract/repeatability';
 import type { KeyCommand } from '../desk/keyboard/desk-keys';
+import type { DeskChange } from '../desk/state/desk-change';
 import { isComplete } from '../desk/state/desk-mark';
 import { DeskState } from '../desk/state/desk-state';
 
@@ -29,11 +30,12 @@ const sameAsOnDesk: ReadonlySet<KeyCommand> = new Set<KeyCommand>([
 ]);
 
 /**
- * The frames of a round, one after the other, on a Desk of its own that knows of no marks but those made again. Which
- * frame is shown decides where in the round one is, so that undo leads back by itself.
+ * The frames of a round, one after the other, on a Desk of its own that knows of one mark at a time: the one that is made
+ * again. Which frame is shown decides where in the round one is, so that undo leads back by itself.
  */
 export class RoundDesk {
   readonly state: DeskState;
+  private readonly kept = signal<ReadonlyMap<number, Joints>>(new Map());
 
   readonly position = computed(() => {
     const [frame, arm] = [this.state.frame(), this.state.arm()];
@@ -43,7 +45,7 @@ export class RoundDesk {
     );
   });
   readonly arm = computed(() => this.state.arm());
-  readonly complete = computed(() => this.isDone(this.position()));
+  readonly complete = computed(() => isComplete(this.state.markAt(this.state.arm(), this.state.frame())));
   readonly done = computed(() => this.places.filter((_, position) => this.isDone(position)).length);
   readonly isFirst = computed(() => this.position() === 0);
   readonly isLast = computed(() => this.position() === this.places.length - 1);
@@ -58,8 +60,14 @@ export class RoundDesk {
       clip,
       frameTimesUs,
       strokes: [],
-      marks: round.marks.flatMap(({ arm, frame, again }) => (again ? [{ arm, frame, ...again }] : [])),
+      marks: [],
       canEdit: true,
+    });
+    this.kept.set(
+      new Map(round.marks.flatMap(({ position, again }) => (again ? [[position, again] as const] : []))),
+    );
+    this.onMarked((position, joints) => {
+      this.kept.update((kept) => new Map(kept).set(position, joints));
     });
     const firstOpen = this.places.findIndex((_, position) => !this.isDone(position));
     this.show(Math.max(0, firstOpen));
@@ -102,16 +110,31 @@ export class RoundDesk {
   }
 
   private isDone(position: number): boolean {
-    const place = this.places[position];
-    return place !== undefined && isComplete(this.state.markAt(place.arm, place.frame));
+    return this.kept().has(position);
   }
 
   private show(position: number): void {
     const place = this.places[position];
     if (!place) return;
+    this.state.takeIn(this.onlyThe(position));
     this.state.goTo(place.frame);
     this.state.chooseArm(place.arm);
     const which = `Frame ${position + 1} of ${this.places.length}`;
     this.state.say(`${which}: the ${place.arm} arm.`);
+  }
+
+  /** Another arm's joints on the same frame would catch presses that are to place this one's. */
+  private onlyThe(position: number): DeskChange[] {
+    const others = [...this.state.marks().values()].map((mark): DeskChange => ({
+      kind: 'mark',
+      arm: mark.arm,
+      frame: mark.frame,
+      before: mark,
+      after: null,
+    }));
+    const [place, joints] = [this.places[position], this.kept().get(position)];
+    if (!place || !joints) return others;
+    const { arm, frame } = place;
+    return [...others, { kind: 'mark', arm, frame, before: null, after: { arm, frame, ...joints } }];
   }
 }

@@ -44,7 +44,7 @@ import { sayRound } from './marking-words';
   `,
   styles: `
     ul {
-      margin: 0;
+      margin: 10px 0 0;
       padding: 0;
       list-style: none;
     }
