@@ -70,6 +70,12 @@ export const routes: Routes = [
     loadChildren: () => import('./desk/desk.routes'),
   },
   {
+    path: 'reviews',
+    title: 'Review',
+    canActivate: [signedIn],
+    loadChildren: () => import('./review/review.routes'),
+  },
+  {
     path: 'club',
     title: 'Club',
     canActivate: [onlyFor('admin')],

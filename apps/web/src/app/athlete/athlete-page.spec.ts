@@ -60,6 +60,7 @@ describe('AthletePage', () => {
     await test.answer('GET', `${call}/sessions`, sessions);
     await test.answer('GET', `${call}/trend`, trend);
     await test.answer('GET', `${call}/targets`, { items: [], nextCursor: null });
+    await test.answer('GET', `${call}/reviews`, pageOf([], { unread: 0 }));
   }
 
   it('says how the arms went before it shows it, and every figure leads to its frame', async () => {

@@ -19,6 +19,7 @@ import { problemOf } from '../core/api/problem-of';
 import { Notices } from '../core/notices';
 import { PageTitle } from '../core/page-title';
 import { SignInState } from '../core/sign-in/sign-in-state';
+import { ReviewList } from '../review/list/review-list';
 import { NewSessionCard } from '../session/new-session-card';
 import { Ask } from '../ui/ask/ask';
 import { DeletedList } from '../ui/deleted-list';
@@ -48,6 +49,7 @@ interface Shown {
     MatButtonModule,
     NewSessionCard,
     ProblemMessage,
+    ReviewList,
     RouterLink,
     SessionCard,
     TargetsCard,

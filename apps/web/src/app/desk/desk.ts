@@ -12,7 +12,7 @@ import {
   signal,
   untracked,
 } from '@angular/core';
-import { RouterLink } from '@angular/router';
+import { Router, RouterLink } from '@angular/router';
 import { DeskBar } from './bar/desk-bar';
 import { Conflicts } from './conflicts/conflicts';
 import { DeskKeyboard } from './keyboard/desk-keyboard';
@@ -69,6 +69,7 @@ export class Desk {
   protected readonly saving = inject(DeskSaving);
   protected readonly keyboard = inject(DeskKeyboard);
   private readonly announcer = inject(LiveAnnouncer);
+  private readonly router = inject(Router);
 
   readonly state = input.required<DeskState>();
 
@@ -111,6 +112,11 @@ export class Desk {
     effect(() => this.keyboard.attach({ state: this.state(), stage }));
     this.followWords();
     this.followFrame();
+  }
+
+  protected useFrame(): void {
+    const [clip, frame] = [this.state().clip().id, this.state().frame()];
+    void this.router.navigate(['/reviews', 'use'], { queryParams: { clip, frame } });
   }
 
   protected skipSetUp(): void {

@@ -19,6 +19,8 @@ describe('SessionPage', () => {
     window.localStorage.clear();
     test = await PageTest.open('sessions/:sessionId', SessionPage, address, user);
     await test.answer('GET', call, session);
+    const none = { items: [], nextCursor: null, total: 0, unread: 0 };
+    await test.answer('GET', `/api/athletes/${session.athleteId}/reviews`, none);
   }
 
   async function choose(...names: string[]) {

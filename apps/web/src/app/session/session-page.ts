@@ -22,6 +22,7 @@ import { Notices } from '../core/notices';
 import { PageTitle } from '../core/page-title';
 import { RecentlyDeleted } from '../core/recently-deleted';
 import { SignInState } from '../core/sign-in/sign-in-state';
+import { ReviewList } from '../review/list/review-list';
 import { Ask } from '../ui/ask/ask';
 import { DeletedList } from '../ui/deleted-list';
 import { EmptyState } from '../ui/empty-state';
@@ -36,6 +37,9 @@ import { UploadPanel } from './upload/upload-panel';
 import type { HasUploads } from './uploads-finished';
 
 const lookAgainMs = 3000;
+/** Who withdraws a film may want the pictures gone as well. */
+const picturesStay =
+  'Pictures made from it stay in reviews that were sent; take them out there if they have to go too.';
 
 /** One visit to the pool: its clips, what they gave, and the place where more are added. */
 @Component({
@@ -48,6 +52,7 @@ const lookAgainMs = 3000;
     MatButtonModule,
     ProblemMessage,
     RailGlance,
+    ReviewList,
     RouterLink,
     UploadPanel,
   ],
@@ -146,7 +151,7 @@ export class SessionPage implements HasUploads {
   protected async deleteClip(clip: Clip): Promise<void> {
     const sure = await this.ask.confirm({
       title: `Delete ${clip.name}?`,
-      words: 'The film goes, with its marks and strokes. You can bring it back for a while.',
+      words: `The film goes, with its marks and strokes. You can bring it back for a while. ${picturesStay}`,
       action: 'Delete the clip',
     });
     if (!sure) return;

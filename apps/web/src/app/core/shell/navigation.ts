@@ -32,8 +32,8 @@ export function liesIn(destination: Destination, url: string, user: SignedInUser
   const path = url.replace(/[?#].*$/, '');
   if (path === destination.address) return true;
   if (user?.role === 'athlete') {
-    return destination.label === 'My sessions' && path.startsWith('/sessions/');
+    return destination.label === 'My sessions' && /^\/(sessions|reviews)\//.test(path);
   }
-  if (destination.address === '/squad') return /^\/(squad|athletes|sessions|clips)(\/|$)/.test(path);
+  if (destination.address === '/squad') return /^\/(squad|athletes|sessions|clips|reviews)(\/|$)/.test(path);
   return path.startsWith(`${destination.address}/`);
 }

@@ -31,6 +31,8 @@ export class DeskBar {
   readonly keys = output();
   readonly undo = output();
   readonly redo = output();
+  /** The frame on the stage is to go into a review. */
+  readonly useFrame = output();
 
   private readonly session = apiResource(getSession, () => ({ params: { id: this.clip().sessionId } }));
 
