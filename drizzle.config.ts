@@ -10,6 +10,8 @@ export default defineConfig({
     './libs/db/schema/repeatability.ts',
     './libs/db/schema/review.ts',
     './libs/db/schema/targets.ts',
+    './libs/db/schema/scale.ts',
+    './libs/db/schema/view.ts',
   ],
   out: './libs/db/migrations',
   casing: 'snake_case',

@@ -17,6 +17,15 @@ export type StrokeKind = z.infer<typeof strokeKindSchema>;
 /** World seconds per file second: 1 for ordinary film, 0.25 for 240 fps film stored at 60. */
 export const captureRateFactorSchema = z.number().finite().min(0.01).max(10);
 
+/** Angle between the left and the right edge of the picture, degrees, measured in water or in air. */
+export const fieldOfViewSchema = z
+  .strictObject({ deg: z.number().min(5).max(170), medium: z.enum(['water', 'air']) })
+  .refine(
+    ({ deg, medium }) => medium === 'air' || deg <= 96,
+    'In water a camera behind a flat port sees at most 96° across.',
+  );
+export type FieldOfView = z.infer<typeof fieldOfViewSchema>;
+
 /** Pixels of the picture as shown; origin at its outer top-left corner, x right, y down. */
 export const pointSchema = z.strictObject({
   x: z.number().finite().min(-20_000).max(20_000),
@@ -37,6 +46,7 @@ export const clipSchema = z.strictObject({
   travel: travelSchema,
   stroke: strokeKindSchema,
   captureRateFactor: z.number(),
+  fieldOfView: fieldOfViewSchema.nullable().describe('Null while nobody has said it'),
   plumb: plumbSchema.nullable(),
   /** Standard uncertainty of a placed joint, per coordinate, pixels of the picture as shown. */
   jointUncertaintyPx: z.strictObject({ shoulder: z.number(), elbow: z.number(), wrist: z.number() }),

@@ -2,6 +2,7 @@ import * as z from 'zod';
 import {
   captureRateFactorSchema,
   clipSchema,
+  fieldOfViewSchema,
   plumbSchema,
   strokeKindSchema,
   travelSchema,
@@ -44,7 +45,7 @@ export const updateClip = endpoint({
   method: 'patch',
   path: '/api/clips/:id',
   access: ['admin', 'coach'],
-  summary: 'Change view, travel direction, stroke kind or capture rate factor',
+  summary: 'Change view, travel direction, stroke kind, capture rate factor or field of view',
   params: idParams,
   body: z
     .strictObject({
@@ -52,6 +53,7 @@ export const updateClip = endpoint({
       travel: travelSchema.optional(),
       stroke: strokeKindSchema.optional(),
       captureRateFactor: captureRateFactorSchema.optional(),
+      fieldOfView: fieldOfViewSchema.nullable().optional(),
     })
     .refine((body) => Object.keys(body).length > 0, 'Say at least one thing to change.'),
   answer: clipSchema,

@@ -5,6 +5,7 @@ import { uncertaintyPartSchema } from './explanation';
 import { frameSchema, idParams, idSchema } from './fields';
 import { curvePointSchema, measureSchema, unitSchema } from './measures';
 import { armSchema } from './strokes';
+import { cautionSummarySchema } from './view-cautions';
 
 export const verdictSchema = z.enum(['left-larger', 'right-larger', 'not-distinguishable', 'too-few']);
 export type Verdict = z.infer<typeof verdictSchema>;
@@ -132,6 +133,7 @@ export const getComparison = endpoint({
       }),
     ),
     plumbAssumed: z.boolean(),
+    cautions: z.array(cautionSummarySchema).describe('What of the view the strokes have to be read with'),
     verticalToleranceDeg: z.number(),
     leftOut: z.array(
       z.strictObject({ clipId: idSchema, reason: z.enum(['other-view', 'drill', 'no-strokes']) }),

@@ -1,7 +1,9 @@
 import * as z from 'zod';
 import { endpoint } from './endpoint';
 import { frameSchema, idParams, idSchema } from './fields';
+import { scalePlaneSchema } from './scale';
 import { armSchema } from './strokes';
+import { viewCautionSchema } from './view-cautions';
 
 /** Every measure that Compare and Trend know. Shares are 0–1, angles degrees, rates cycles per minute. */
 export const measureSchema = z.enum([
@@ -58,6 +60,11 @@ export const strokeMeasuresSchema = z.strictObject({
   strokeRate: figureSchema,
   forearmCurve: z.array(curvePointSchema),
   dropCurve: z.array(curvePointSchema),
+  cautions: z.array(viewCautionSchema).describe('What of the view these measures have to be read with'),
+  inMetres: z
+    .strictObject({ reachAtEntry: figureSchema, handDepth: figureSchema })
+    .nullable()
+    .describe('Metres, from the clip’s scale; null where there is none'),
 });
 export type StrokeMeasures = z.infer<typeof strokeMeasuresSchema>;
 
@@ -72,6 +79,8 @@ export const getMeasures = endpoint({
     items: z.array(strokeMeasuresSchema),
     nextCursor: z.null(),
     plumbAssumed: z.boolean(),
+    cautions: z.array(viewCautionSchema).describe('What holds for the whole clip'),
+    scalePlane: scalePlaneSchema.nullable(),
     verticalToleranceDeg: z.number(),
   }),
 });

@@ -20,6 +20,7 @@ export const problemCodes = [
   'strokes-overlap',
   'plumb-too-short',
   'joints-coincide',
+  'scale-unusable',
   'clip-not-ready',
   'not-a-video',
   'no-video-track',

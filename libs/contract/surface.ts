@@ -13,6 +13,7 @@ import * as people from './people';
 import * as repeatability from './repeatability';
 import * as reviewLists from './review-lists';
 import * as reviews from './reviews';
+import * as scale from './scale';
 import * as sessions from './sessions';
 import * as squads from './squads';
 import * as stills from './stills';
@@ -39,6 +40,7 @@ export const surface: readonly Endpoint[] = [
   strokes,
   marks,
   measures,
+  scale,
   explanation,
   comparison,
   trend,

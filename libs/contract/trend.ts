@@ -5,6 +5,7 @@ import { uncertaintyPartSchema } from './explanation';
 import { dateSchema, frameSchema, idParams, idSchema } from './fields';
 import { measureSchema, unitSchema } from './measures';
 import { armSchema } from './strokes';
+import { cautionSummarySchema } from './view-cautions';
 
 /** Views in which the arm's angles mean what their definitions say. */
 export const sideViewSchema = z.enum(['side-underwater', 'side-above']);
@@ -91,6 +92,7 @@ export const getTrend = endpoint({
     /** Every view and stroke kind with this measure, with the number of its sessions: what can be chosen. */
     series: z.array(z.strictObject({ view: sideViewSchema, stroke: strokeKindSchema, sessions: z.int() })),
     arms: z.array(armTrendSchema),
+    cautions: z.array(cautionSummarySchema).describe('What of the view the strokes have to be read with'),
     leftOut: z.array(
       z.strictObject({
         sessionId: idSchema,

@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import { marks, strokes } from '@stillstroke/db/schema/film';
 import { placeTarget } from '../../apps/api/src/targets/test-targets';
+import { clipScales } from '@stillstroke/db/schema/scale';
 import { issueInvitation } from '../../apps/api/src/invitations/issue';
 import { placeClip, placeSession } from '../../apps/api/src/media/test-films';
 import { emailOf, testPassword, type ClubIds, type TestClub } from '../../apps/api/src/platform/test-club';
@@ -94,6 +95,7 @@ export function placeThings(club: TestClub): Things {
     })
     .run();
   const targetId = placeTarget(context, ids.athletes.own);
+  context.db.insert(clipScales).values({ clipId, scale, updatedAt }).run();
   const { token } = issueInvitation(context.db, context.now(), ids.users.guardian);
   return {
     ...ids,
@@ -123,6 +125,15 @@ const session = ({ sessionId }: Things) => `/api/sessions/${sessionId}`;
 const clip = ({ clipId }: Things) => `/api/clips/${clipId}`;
 const target = ({ targetId }: Things) => `/api/targets/${targetId}`;
 const stroke = ({ strokeId }: Things) => `/api/strokes/${strokeId}`;
+const scale = {
+  kind: 'length',
+  plane: 'swimmer',
+  from: { x: 100, y: 100 },
+  to: { x: 400, y: 100 },
+  metres: 1,
+  uncertaintyM: 0,
+  check: null,
+};
 const joints = { shoulder: { x: 400, y: 300 }, elbow: { x: 500, y: 330 }, wrist: { x: 560, y: 420 } };
 
 const emptyExport = ({ sessionId, athletes }: Things) => ({
@@ -300,6 +311,18 @@ export const routes: readonly RouteRow[] = [
     path: (things) => `${clip(things)}/calibration`,
     body: () => ({ plumb: { top: { x: 100, y: 50 }, bottom: { x: 104, y: 650 } } }),
     statuses: change(200),
+  },
+  { route: 'get /api/clips/:id/scale', path: (things) => `${clip(things)}/scale`, statuses: read },
+  {
+    route: 'put /api/clips/:id/scale',
+    path: (things) => `${clip(things)}/scale`,
+    body: () => ({ scale }),
+    statuses: change(200),
+  },
+  {
+    route: 'delete /api/clips/:id/scale',
+    path: (things) => `${clip(things)}/scale`,
+    statuses: change(204),
   },
   { route: 'get /api/clips/:id/measures', path: (things) => `${clip(things)}/measures`, statuses: read },
 

@@ -13,6 +13,7 @@ import type { AppContext } from './platform/context';
 import { repeatabilityRoutes } from './repeatability/repeatability.routes';
 import { reviewListsRoutes } from './review-lists/review-lists.routes';
 import { reviewsRoutes } from './reviews/reviews.routes';
+import { scalesRoutes } from './scales/scales.routes';
 import { sessionsRoutes } from './sessions/sessions.routes';
 import { squadsRoutes } from './squads/squads.routes';
 import { stillsRoutes } from './stills/stills.routes';
@@ -33,6 +34,7 @@ export const routers: readonly RouterFactory[] = [
   strokesRoutes,
   marksRoutes,
   measuresRoutes,
+  scalesRoutes,
   explanationsRoutes,
   comparisonRoutes,
   trendRoutes,

@@ -51,6 +51,9 @@ export const clips = sqliteTable(
     stroke: text({ enum: ['full', 'drill'] }).notNull(),
     /** World seconds per file second. */
     captureRateFactor: real().notNull().default(1),
+    /** Degrees between the side edges of the picture, in water or in air; null while nobody has said it. */
+    fieldOfViewDeg: real(),
+    fieldOfViewMedium: text({ enum: ['water', 'air'] }),
     plumbTopX: real(),
     plumbTopY: real(),
     plumbBottomX: real(),

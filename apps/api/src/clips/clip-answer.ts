@@ -54,9 +54,11 @@ type Found = { clip: ClipRow } & Pick<Clip, 'athleteId' | 'markedFrames' | 'stro
 
 function asAnswer({ clip: row, ...counted }: Found): Clip {
   const { plumbTopX, plumbTopY, plumbBottomX, plumbBottomY, figuresFormulas: _, ...rest } = row;
-  const { markerId: _marker, jointShoulderPx, jointElbowPx: _elbow, jointWristPx: _wrist, ...facts } = rest;
+  const { markerId: _marker, jointShoulderPx, jointElbowPx: _elbow, jointWristPx: _wrist, ...others } = rest;
+  const { fieldOfViewDeg, fieldOfViewMedium, ...facts } = others;
   return {
     ...facts,
+    fieldOfView: fieldOfViewOf({ fieldOfViewDeg, fieldOfViewMedium }),
     plumb: plumbOf({ plumbTopX, plumbTopY, plumbBottomX, plumbBottomY }),
     jointUncertaintyPx: { ...jointUncertaintyOf(row) },
     jointUncertaintyOwn: jointShoulderPx !== null,
@@ -78,4 +80,12 @@ export function plumbOf(
   const { plumbTopX, plumbTopY, plumbBottomX, plumbBottomY } = row;
   if (plumbTopX === null || plumbTopY === null || plumbBottomX === null || plumbBottomY === null) return null;
   return { top: { x: plumbTopX, y: plumbTopY }, bottom: { x: plumbBottomX, y: plumbBottomY } };
+}
+
+/** The field of view of a clip's row; null while nobody has said it. */
+export function fieldOfViewOf({
+  fieldOfViewDeg: deg,
+  fieldOfViewMedium: medium,
+}: Pick<ClipRow, 'fieldOfViewDeg' | 'fieldOfViewMedium'>): Clip['fieldOfView'] {
+  return deg === null || medium === null ? null : { deg, medium };
 }

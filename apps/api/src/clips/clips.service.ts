@@ -28,7 +28,7 @@ export function updateClip(
   { db }: Context,
   user: SignedInUser,
   clipId: string,
-  { view, travel, stroke, captureRateFactor }: BodyOf<typeof updateCall>,
+  { view, travel, stroke, captureRateFactor, fieldOfView }: BodyOf<typeof updateCall>,
 ): Clip {
   const { clip } = liveClip(db, user, clipId);
   return db.transaction(
@@ -39,6 +39,10 @@ export function updateClip(
           ...(travel !== undefined && { travel }),
           ...(stroke !== undefined && { stroke }),
           ...(captureRateFactor !== undefined && { captureRateFactor }),
+          ...(fieldOfView !== undefined && {
+            fieldOfViewDeg: fieldOfView?.deg ?? null,
+            fieldOfViewMedium: fieldOfView?.medium ?? null,
+          }),
         })
         .where(eq(clips.id, clip.id))
         .run();

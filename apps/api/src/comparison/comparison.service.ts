@@ -7,6 +7,7 @@ import { and, asc, eq, inArray, isNull } from 'drizzle-orm';
 import type { ClipRow } from '../clips/clip-answer';
 import { comparedView } from '../measures/compared-view';
 import { forearmCurves } from '../measures/forearm-curves';
+import { keptCautions } from '../measures/kept-cautions';
 import { keptFigures } from '../measures/kept-figures';
 import type { AppContext } from '../platform/context';
 import { liveSession } from '../sessions/live-film';
@@ -33,6 +34,7 @@ export function getComparison(
     breath: compareBreath(figures),
     view: taken[0]?.view ?? null,
     strokes: taken.flatMap((clip) => comparedStrokes(db, clip)),
+    cautions: keptCautions(db, inArray(clips.id, [...takenIds])),
     plumbAssumed: taken.some((clip) => clip.plumbTopX === null),
     verticalToleranceDeg: VERTICAL_TOLERANCE_DEG,
     leftOut,

@@ -6,7 +6,8 @@ import type { StrokeEvents } from '@stillstroke/geometry/events/stroke';
 import type { ReadingContext } from '@stillstroke/geometry/measures/reading-context';
 import { strokeMeasures, type StrokeMeasures } from '@stillstroke/geometry/measures/stroke-measures';
 import { and, asc, eq, sql } from 'drizzle-orm';
-import { jointUncertaintyOf, plumbOf, type ClipRow } from '../clips/clip-answer';
+import type { ViewContext } from '@stillstroke/geometry/view/view-context';
+import { fieldOfViewOf, jointUncertaintyOf, plumbOf, type ClipRow } from '../clips/clip-answer';
 import { frameTimes } from '../media/frame-blobs';
 
 export type StrokeRow = typeof strokes.$inferSelect;
@@ -57,6 +58,17 @@ export function readingContext(clip: ClipRow): ReadingContext {
   };
 }
 
+/** What the view checks of a clip depend on beside its marks. */
+export function viewContext(clip: ClipRow): ViewContext {
+  const { view, width, height } = clip;
+  return {
+    ...readingContext(clip),
+    view,
+    picture: { width, height },
+    fieldOfView: fieldOfViewOf(clip),
+  };
+}
+
 export function strokeEvents(row: StrokeRow): StrokeEvents {
   return {
     entry: row.entryFrame,
@@ -84,6 +96,8 @@ export function clipTimes(db: Reader, clipId: string): number[] {
 export interface MeasuredStroke {
   readonly stroke: StrokeRow;
   readonly measures: StrokeMeasures;
+  /** Of the stroke's arm, all along the clip. */
+  readonly marks: readonly FrameMark[];
   /** Of the clip's frames, whole microseconds. */
   readonly times: readonly number[];
 }
@@ -110,6 +124,7 @@ export function measureStrokes(
   return found.map((stroke) => ({
     stroke,
     times,
+    marks: ofArm[stroke.arm],
     measures: strokeMeasures(strokeEvents(stroke), ofArm[stroke.arm], times, context),
   }));
 }

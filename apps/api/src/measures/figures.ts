@@ -4,10 +4,11 @@ import { clips, strokeFigures } from '@stillstroke/db/schema/film';
 import { eq, inArray, ne } from 'drizzle-orm';
 import type { AppContext } from '../platform/context';
 import { clipRow, measureStrokes, strokeEvents, type StrokeRow } from './clip-reading';
+import { keepCautions } from './kept-cautions';
 import { figuresByMeasure, setUpPart } from './stroke-figures';
 
 /** Count this up when a formula behind a figure changes: figures kept from before are then computed again at start. */
-export const FORMULAS = 1;
+export const FORMULAS = 2;
 
 type Writer = Pick<Db, 'select' | 'insert' | 'delete' | 'update'>;
 
@@ -37,6 +38,7 @@ function refresh(tx: Writer, clipId: string, wanted: (stroke: StrokeRow) => bool
   const measured = measureStrokes(tx, clip, wanted);
   if (measured.length === 0) return;
   const strokeIds = measured.map(({ stroke }) => stroke.id);
+  keepCautions(tx, clip, measured);
   tx.delete(strokeFigures).where(inArray(strokeFigures.strokeId, strokeIds)).run();
   const rows = measured.flatMap(({ stroke, measures, times }) => {
     const figures = figuresByMeasure(strokeEvents(stroke), measures, times);

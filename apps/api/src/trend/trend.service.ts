@@ -6,6 +6,7 @@ import type { Db } from '@stillstroke/db/open';
 import { clips, sessions, strokeFigures } from '@stillstroke/db/schema/film';
 import { and, asc, eq, isNull, sql } from 'drizzle-orm';
 import { comparedView, sideViews } from '../measures/compared-view';
+import { keptCautions } from '../measures/kept-cautions';
 import { keptFigures, type KeptFigure } from '../measures/kept-figures';
 import { unitOf } from '../measures/units';
 import type { AppContext } from '../platform/context';
@@ -35,6 +36,11 @@ export function getTrend(
     stroke,
     series: seriesOf({ [stroke]: figures, [otherKind(stroke)]: keptFigures(db, of, otherKind(stroke)) }),
     arms: [armTrend('left', taken), armTrend('right', taken)],
+    cautions: keptCautions(
+      db,
+      sql`${eq(sessions.athleteId, athlete.id)} and ${eq(clips.view, view)} and ${eq(clips.stroke, stroke)}`,
+      measure,
+    ),
     leftOut: leftOut(db, athlete.id, { view, stroke }, new Set(taken.map(({ sessionId }) => sessionId))),
   };
 }

@@ -35,6 +35,7 @@ const trend = (arms: ArmTrend[], measure: Trend['measure'] = 'verticalAt'): Tren
   stroke: 'full',
   series: [{ view: 'side-underwater', stroke: 'full', sessions: 2 }],
   arms,
+  cautions: [],
   leftOut: [],
 });
 

@@ -24,6 +24,7 @@ export function madeClip(more: Partial<Clip> = {}): Clip {
     travel: 'right',
     stroke: 'full',
     captureRateFactor: 1,
+    fieldOfView: null,
     plumb: null,
     status: 'ready',
     width: 1920,

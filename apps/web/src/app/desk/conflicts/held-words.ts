@@ -1,6 +1,7 @@
 import { formatFigure } from '../../ui/figure/format-figure';
 import type { Held } from '../saving/outbox';
 import type { Wanted } from '../saving/pending-change';
+import type { ClipFacts } from '../state/desk-change';
 import { eventsInOrder, eventWords } from '../state/desk-stroke';
 import type { DeskState } from '../state/desk-state';
 import { viewWords } from '../clip-words';
@@ -39,9 +40,7 @@ export function sayVersion(wanted: Wanted, state: DeskState): string {
       return wanted.plumb ? 'drawn' : 'taken away';
     case 'facts':
       return Object.entries(wanted.facts)
-        .map(([name, value]) =>
-          name === 'view' ? viewWords[value as keyof typeof viewWords] : String(value),
-        )
+        .map(([name, value]) => sayFact(name as keyof ClipFacts, value))
         .join(', ');
   }
 }
@@ -50,6 +49,15 @@ export function sayVersion(wanted: Wanted, state: DeskState): string {
 export function frameOfHeld({ change: { wanted } }: Held): number | null {
   if (wanted.kind === 'mark') return wanted.frame;
   return wanted.kind === 'stroke' ? (wanted.stroke?.entry ?? null) : null;
+}
+
+function sayFact(name: keyof ClipFacts, value: ClipFacts[keyof ClipFacts]): string {
+  if (name === 'view') return viewWords[value as ClipFacts['view']];
+  return typeof value === 'object' ? sayFieldOfView(value) : String(value);
+}
+
+function sayFieldOfView(view: ClipFacts['fieldOfView']): string {
+  return view ? `${view.deg}° across in ${view.medium}` : 'field of view not said';
 }
 
 function sayMark({ mark }: Extract<Wanted, { kind: 'mark' }>, state: DeskState): string {

@@ -181,7 +181,7 @@ function theirStroke(
 }
 
 function theirClip(wanted: Wanted, clip: Clip): Theirs {
-  const { view, travel, stroke, captureRateFactor, plumb } = clip;
+  const { view, travel, stroke, captureRateFactor, fieldOfView, plumb } = clip;
   if (wanted.kind === 'plumb') return { wanted: { kind: 'plumb', plumb }, version: 1 };
-  return { wanted: { kind: 'facts', facts: { view, travel, stroke, captureRateFactor } }, version: 1 };
+  return { wanted: { kind: 'facts', facts: { view, travel, stroke, captureRateFactor, fieldOfView } }, version: 1 };
 }

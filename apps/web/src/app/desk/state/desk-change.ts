@@ -1,4 +1,4 @@
-import type { Plumb, StrokeKind, Travel, View } from '@stillstroke/contract/clip-facts';
+import type { FieldOfView, Plumb, StrokeKind, Travel, View } from '@stillstroke/contract/clip-facts';
 import type { Arm } from '@stillstroke/contract/strokes';
 import { markKey, type DeskMark } from './desk-mark';
 import type { DeskStroke } from './desk-stroke';
@@ -10,6 +10,8 @@ export interface ClipFacts {
   readonly stroke: StrokeKind;
   /** World seconds per file second. */
   readonly captureRateFactor: number;
+  /** Null while nobody has said it. */
+  readonly fieldOfView: FieldOfView | null;
 }
 
 /** One thing of the clip that becomes another: null is "not there". Whole values, so that a change can be turned round. */

@@ -42,8 +42,8 @@ export class DeskFilm {
     strokes: readonly DeskStroke[],
     marks: readonly DeskMark[],
   ) {
-    const { view, travel, stroke, captureRateFactor } = given;
-    this.storedFacts = signal<ClipFacts>({ view, travel, stroke, captureRateFactor });
+    const { view, travel, stroke, captureRateFactor, fieldOfView } = given;
+    this.storedFacts = signal<ClipFacts>({ view, travel, stroke, captureRateFactor, fieldOfView });
     this.facts = this.storedFacts.asReadonly();
     this.clip = computed<Clip>(() => ({ ...this.given, ...this.storedFacts(), plumb: this.plumb() }));
     this.storedPlumb.set(given.plumb);

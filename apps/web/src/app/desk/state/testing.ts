@@ -14,6 +14,7 @@ export const testClip: Clip = {
   travel: 'right',
   stroke: 'full',
   captureRateFactor: 1,
+  fieldOfView: null,
   plumb: { top: { x: 640, y: 60 }, bottom: { x: 640, y: 660 } },
   status: 'ready',
   width: 1280,
