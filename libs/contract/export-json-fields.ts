@@ -39,6 +39,11 @@ export const jsonFields: readonly JsonField[] = [
   field(`${clip}.travel`, 'Direction in which the swimmer travels in the picture'),
   field(`${clip}.stroke`, 'full or drill'),
   field(`${clip}.captureRateFactor`, 'World seconds per file second'),
+  field(
+    `${clip}.fieldOfView.deg`,
+    'Degrees between the side edges of the picture; fieldOfView is null while nobody has said it',
+  ),
+  field(`${clip}.fieldOfView.medium`, 'Measured in water or in air'),
   field(`${clip}.plumb.top.x`, 'Upper end of the plumb, pixels; plumb is null where none was drawn'),
   field(`${clip}.plumb.top.y`, 'As above'),
   field(`${clip}.plumb.bottom.x`, 'Lower end of the plumb, pixels'),

@@ -1,5 +1,5 @@
 import * as z from 'zod';
-import { captureRateFactorSchema, clipSchema } from './clip-facts';
+import { captureRateFactorSchema, clipSchema, fieldOfViewSchema } from './clip-facts';
 import { endpoint } from './endpoint';
 import { dateSchema, frameSchema, idParams, idSchema, instantSchema } from './fields';
 import { markSchema } from './marks';
@@ -59,6 +59,7 @@ export const exportClipSchema = clipSchema
   .extend({
     name: z.string().max(200),
     captureRateFactor: captureRateFactorSchema,
+    fieldOfView: fieldOfViewSchema.nullable().default(null),
     jointUncertaintyPx: z.strictObject({ shoulder: z.number(), elbow: z.number(), wrist: z.number() }),
     timesUs: z.array(z.int()).max(2_000_000),
     strokes: z.array(exportStrokeSchema).max(5_000),

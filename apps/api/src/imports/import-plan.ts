@@ -2,7 +2,7 @@ import type { ExportClip, ExportMark, ExportStroke } from '@stillstroke/contract
 import type { ImportChoice, ImportCounts } from '@stillstroke/contract/import';
 import { marks, strokes } from '@stillstroke/db/schema/film';
 import { asc, eq } from 'drizzle-orm';
-import { plumbOf, type ClipRow } from '../clips/clip-answer';
+import { fieldOfViewOf, plumbOf, type ClipRow } from '../clips/clip-answer';
 import { frameMark, type MarkRow, type Reader, type StrokeRow } from '../measures/clip-reading';
 import { strokeAnswer } from '../strokes/stroke-answer';
 
@@ -96,16 +96,19 @@ function isSame(a: unknown, b: unknown): boolean {
 }
 
 /** What a person says about a clip and its picture, and what a file brings along of it. */
-const setUpFields = ['view', 'travel', 'stroke', 'captureRateFactor', 'plumb'] as const;
+const setUpFields = ['view', 'travel', 'stroke', 'captureRateFactor', 'fieldOfView', 'plumb'] as const;
 
 function changedSetUp(from: ExportClip, to: ClipRow): string[] {
-  const here = { ...to, plumb: plumbOf(to) };
+  const here = { ...to, plumb: plumbOf(to), fieldOfView: fieldOfViewOf(to) };
   return setUpFields.filter((field) => !isSame(points(here[field]), points(from[field])));
 }
 
-/** Plumbs as lists of numbers, since objects from rows and from files may have their keys in another order. */
-function points(value: string | number | ReturnType<typeof plumbOf>): unknown {
+/** Plumbs and fields of view as lists, since objects from rows and from files may have their keys in another order. */
+function points(
+  value: string | number | ReturnType<typeof plumbOf> | ReturnType<typeof fieldOfViewOf>,
+): unknown {
   if (value === null || typeof value !== 'object') return value;
+  if ('deg' in value) return [value.deg, value.medium];
   return [value.top.x, value.top.y, value.bottom.x, value.bottom.y];
 }
 

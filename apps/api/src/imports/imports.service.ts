@@ -10,7 +10,7 @@ import type {
   previewImport,
 } from '@stillstroke/contract/import';
 import type { Db } from '@stillstroke/db/open';
-import { plumbOf, type ClipRow } from '../clips/clip-answer';
+import { fieldOfViewOf, plumbOf, type ClipRow } from '../clips/clip-answer';
 import { exportedClip } from '../exports/export-clip';
 import { liveClips } from '../exports/export-session';
 import { clipRow } from '../measures/clip-reading';
@@ -159,7 +159,18 @@ function basisOf(db: Pick<Db, 'select'>, ours: readonly ClipRow[]): string {
   const hash = createHash('sha256');
   for (const row of ours) {
     const { id, view, travel, stroke, captureRateFactor } = row;
-    hash.update(JSON.stringify([id, view, travel, stroke, captureRateFactor, plumbOf(row), onClip(db, id)]));
+    hash.update(
+      JSON.stringify([
+        id,
+        view,
+        travel,
+        stroke,
+        captureRateFactor,
+        fieldOfViewOf(row),
+        plumbOf(row),
+        onClip(db, id),
+      ]),
+    );
   }
   return hash.digest('hex');
 }

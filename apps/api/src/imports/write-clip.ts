@@ -43,7 +43,7 @@ export function writeClip(
 }
 
 function writeSetUp(tx: Transaction, from: ExportClip, to: ClipRow, choice: ImportChoice): void {
-  const { view, travel, stroke, captureRateFactor, plumb } = from;
+  const { view, travel, stroke, captureRateFactor, fieldOfView, plumb } = from;
   if (!cameraRoll(plumb).ok)
     throw new HttpProblem(422, 'plumb-too-short', 'The plumb in the file is too short or lies level.');
   const plumbColumns = {
@@ -59,7 +59,15 @@ function writeSetUp(tx: Transaction, from: ExportClip, to: ClipRow, choice: Impo
     return;
   }
   tx.update(clips)
-    .set({ view, travel, stroke, captureRateFactor, ...plumbColumns })
+    .set({
+      view,
+      travel,
+      stroke,
+      captureRateFactor,
+      fieldOfViewDeg: fieldOfView?.deg ?? null,
+      fieldOfViewMedium: fieldOfView?.medium ?? null,
+      ...plumbColumns,
+    })
     .where(eq(clips.id, to.id))
     .run();
 }

@@ -15,6 +15,7 @@ import { getComparison } from '@stillstroke/contract/comparison';
 import { getSession } from '@stillstroke/contract/sessions';
 import { listTargets } from '@stillstroke/contract/targets';
 import { apiResource } from '../core/api/api';
+import { CautionLine } from '../ui/caution-line';
 import { ProblemMessage } from '../ui/problem-message';
 import { BreathRows } from './breath-rows';
 import { sayComparison } from './comparison-sentence';
@@ -34,6 +35,7 @@ const leftOutWords = {
 @Component({
   selector: 'st-compare-page',
   imports: [
+    CautionLine,
     BreathRows,
     DatePipe,
     MatSliderModule,

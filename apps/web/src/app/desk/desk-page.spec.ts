@@ -113,6 +113,7 @@ describe('DeskPage', () => {
     (await asked('GET', `${clipUrl}/strokes`)).flush({ items: strokes, nextCursor: null });
     const items = marks.map((mark) => saved(mark));
     (await asked('GET', `${clipUrl}/marks`)).flush({ items, nextCursor: null });
+    (await asked('GET', `${clipUrl}/scale`)).flush({ scale: null, version: 0 });
     await until(() => page().querySelector('st-stage .caption strong') !== null);
     (await asked('GET', `/api/sessions/${clip.sessionId}`)).flush(testSession);
     await settle();

@@ -18,9 +18,12 @@ import { Conflicts } from './conflicts/conflicts';
 import { DeskKeyboard } from './keyboard/desk-keyboard';
 import { MarksList } from './marks/marks-list';
 import { DeskExplainer } from './readings/desk-explainer';
+import { HandReadings } from './readings/hand-readings';
 import { Readings } from './readings/readings';
 import { TargetLines } from './readings/target-lines';
 import { DeskSaving } from './saving/desk-saving';
+import { ScalePanel } from './scale/scale-panel';
+import { FieldOfView } from './set-up/field-of-view';
 import { SetUpPanel } from './set-up/set-up-panel';
 import type { TheirMark } from './stage/desk-stage';
 import { Stage } from './stage/stage';
@@ -49,10 +52,13 @@ const FRAME_SAID_AFTER_MS = 500;
   imports: [
     Conflicts,
     DeskBar,
+    FieldOfView,
+    HandReadings,
     MarksList,
     PanelTabs,
     Readings,
     RouterLink,
+    ScalePanel,
     SetUpPanel,
     Stage,
     Strip,

@@ -19,6 +19,7 @@ import {
 } from '../ui/figure/format-figure';
 import { How } from '../ui/explain/how';
 import { measuresInOrder, measureWords, sayMoved } from '../ui/figure/measure-words';
+import { CautionLine } from '../ui/caution-line';
 import { ProblemMessage } from '../ui/problem-message';
 import { changeWords, explainChange, explainPoint, explainSlope } from './explain-trend';
 import { sayDay } from './say-day';
@@ -36,7 +37,16 @@ const leftOutWords = {
 /** One measure of one athlete over the sessions. */
 @Component({
   selector: 'st-trend-page',
-  imports: [DatePipe, How, MatFormFieldModule, MatSelectModule, ProblemMessage, RouterLink, TrendChart],
+  imports: [
+    CautionLine,
+    DatePipe,
+    How,
+    MatFormFieldModule,
+    MatSelectModule,
+    ProblemMessage,
+    RouterLink,
+    TrendChart,
+  ],
   templateUrl: './trend-page.html',
   styleUrl: './trend-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,

@@ -19,6 +19,8 @@ export function nameHeld({ change: { wanted } }: Held, state: DeskState): string
     }
     case 'plumb':
       return 'The plumb';
+    case 'scale':
+      return 'The scale';
     case 'facts':
       return 'The set-up';
   }
@@ -38,6 +40,8 @@ export function sayVersion(wanted: Wanted, state: DeskState): string {
     }
     case 'plumb':
       return wanted.plumb ? 'drawn' : 'taken away';
+    case 'scale':
+      return sayScale(wanted.scale);
     case 'facts':
       return Object.entries(wanted.facts)
         .map(([name, value]) => sayFact(name as keyof ClipFacts, value))
@@ -49,6 +53,13 @@ export function sayVersion(wanted: Wanted, state: DeskState): string {
 export function frameOfHeld({ change: { wanted } }: Held): number | null {
   if (wanted.kind === 'mark') return wanted.frame;
   return wanted.kind === 'stroke' ? (wanted.stroke?.entry ?? null) : null;
+}
+
+function sayScale(scale: Extract<Wanted, { kind: 'scale' }>['scale']): string {
+  if (!scale) return 'taken away';
+  return scale.kind === 'length'
+    ? `a length of ${scale.metres} m`
+    : `a rectangle of ${scale.widthM} by ${scale.heightM} m`;
 }
 
 function sayFact(name: keyof ClipFacts, value: ClipFacts[keyof ClipFacts]): string {

@@ -1,11 +1,13 @@
 import { ChangeDetectionStrategy, Component, computed, input, output } from '@angular/core';
 import type { StrokeMeasures } from '@stillstroke/geometry/measures/stroke-measures';
 import type { Measure } from '@stillstroke/contract/measures';
+import type { ViewCaution } from '@stillstroke/geometry/view/caution';
 import { PlumbDial } from '../../ui/dial/plumb-dial';
 import type { Explain } from '../../ui/explain/explanation';
 import { How } from '../../ui/explain/how';
 import { fixed, formatFigure, formatUncertainty } from '../../ui/figure/format-figure';
 import { sayReason } from '../../ui/figure/reason-words';
+import { ViewCautions } from '../../ui/view-cautions';
 import { sayDrop, sayForearm, type ArmReading } from './arm-reading';
 import type { AngleName, DeskExplainer } from './desk-explainer';
 import { PullBar } from './pull-bar';
@@ -21,7 +23,7 @@ export interface StrokeReading {
 /** Beside the stage: the current arm against the plumb, its four angles, and the stroke it belongs to. */
 @Component({
   selector: 'st-readings',
-  imports: [How, PlumbDial, PullBar],
+  imports: [How, PlumbDial, PullBar, ViewCautions],
   templateUrl: './readings.html',
   styleUrl: './readings.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -33,6 +35,9 @@ export class Readings {
   readonly reason = input<string | null>(null);
   readonly stroke = input.required<StrokeReading | null>();
   readonly plumbAssumed = input(false);
+  /** What of the view the angles of the frame, and the measures of the stroke, have to be read with. */
+  readonly cautions = input<readonly ViewCaution[]>([]);
+  readonly strokeCautions = input<readonly ViewCaution[]>([]);
   readonly toleranceDeg = input(15);
 
   /** Opens the figures up; without it they stand alone. */

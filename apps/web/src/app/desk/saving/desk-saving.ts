@@ -3,6 +3,7 @@ import type { SignedInUser } from '@stillstroke/contract/auth';
 import type { Clip } from '@stillstroke/contract/clip-facts';
 import { getClip, getClipFrames } from '@stillstroke/contract/clips';
 import { listMarks } from '@stillstroke/contract/marks';
+import { getScale } from '@stillstroke/contract/scale';
 import { listStrokes } from '@stillstroke/contract/strokes';
 import { firstValueFrom } from 'rxjs';
 import { Api } from '../../core/api/api';
@@ -56,16 +57,18 @@ export class DeskSaving {
   async open(clip: Clip, user: SignedInUser): Promise<DeskState> {
     this.box()?.close();
     const params = { id: clip.id };
-    const [frames, strokes, marks] = await Promise.all([
+    const [frames, strokes, marks, scale] = await Promise.all([
       firstValueFrom(this.api.call(getClipFrames, { params })),
       firstValueFrom(this.api.call(listStrokes, { params })),
       firstValueFrom(this.api.call(listMarks, { params })),
+      firstValueFrom(this.api.call(getScale, { params })),
     ]);
     const desk = new DeskState({
       clip,
       frameTimesUs: frames.timestampsUs,
       strokes: strokes.items,
       marks: marks.items,
+      scale: scale.scale,
       canEdit: user.role === 'coach' || user.role === 'admin',
     });
     this.desk = desk;
@@ -77,6 +80,7 @@ export class DeskSaving {
       new Map([
         ...marks.items.map((mark) => [`mark:${markKey(mark.arm, mark.frame)}`, mark.version] as const),
         ...strokes.items.map((stroke) => [`stroke:${stroke.id}`, stroke.version] as const),
+        ['scale', scale.version] as const,
       ]),
     );
     for (const { wanted } of await box.recover()) desk.takeIn([changeTo(desk, wanted)]);
@@ -142,6 +146,8 @@ export function changeTo(desk: DeskState, wanted: Wanted): DeskChange {
     }
     case 'plumb':
       return { kind: 'plumb', before: desk.plumb(), after: wanted.plumb };
+    case 'scale':
+      return { kind: 'scale', before: desk.scale.stored(), after: wanted.scale };
     case 'facts': {
       const before = desk.setUp.facts();
       return { kind: 'facts', before, after: { ...before, ...wanted.facts } };

@@ -241,7 +241,7 @@ export class Outbox {
     // The finished one is gone from the server; the unfinished one stays on the device.
     if (onlyDraft) this.keep({ ...change, base: 0, tried: false });
     else this.forget(change);
-    const versioned = change.wanted.kind === 'mark' || change.wanted.kind === 'stroke';
+    const versioned = ['mark', 'stroke', 'scale'].includes(change.wanted.kind);
     if (versioned) this.rebase(change.thing, version);
   }
 

@@ -1,4 +1,5 @@
 import type { Plumb } from '@stillstroke/contract/clip-facts';
+import type { Scale } from '@stillstroke/contract/scale';
 import type { Arm } from '@stillstroke/contract/strokes';
 import type { ClipFacts, DeskChange } from '../state/desk-change';
 import { thingOf } from '../state/desk-change';
@@ -10,6 +11,7 @@ export type Wanted =
   | { readonly kind: 'mark'; readonly arm: Arm; readonly frame: number; readonly mark: DeskMark | null }
   | { readonly kind: 'stroke'; readonly id: string; readonly stroke: DeskStroke | null }
   | { readonly kind: 'plumb'; readonly plumb: Plumb | null }
+  | { readonly kind: 'scale'; readonly scale: Scale | null }
   /** Only what was changed, so that another's change of another fact stays. */
   | { readonly kind: 'facts'; readonly facts: Partial<ClipFacts> };
 
@@ -49,6 +51,8 @@ export function wantedOf(change: DeskChange): Wanted {
       return { kind: 'stroke', id: change.id, stroke: change.after };
     case 'plumb':
       return { kind: 'plumb', plumb: change.after };
+    case 'scale':
+      return { kind: 'scale', scale: change.after };
     case 'facts':
       return { kind: 'facts', facts: differing(change.before, change.after) };
   }
@@ -74,7 +78,9 @@ export function thingWanted(wanted: Wanted): string {
 
 export function isNothing(wanted: Wanted): boolean {
   return (
-    (wanted.kind === 'mark' && wanted.mark === null) || (wanted.kind === 'stroke' && wanted.stroke === null)
+    (wanted.kind === 'mark' && wanted.mark === null) ||
+    (wanted.kind === 'stroke' && wanted.stroke === null) ||
+    (wanted.kind === 'scale' && wanted.scale === null)
   );
 }
 
@@ -82,6 +88,7 @@ export function isNothing(wanted: Wanted): boolean {
 export function sameWanted(a: Wanted, b: Wanted): boolean {
   if (a.kind === 'mark' && b.kind === 'mark') return sameMark(a.mark, b.mark);
   if (a.kind === 'stroke' && b.kind === 'stroke') return sameStroke(a.stroke, b.stroke);
+  if (a.kind === 'scale' && b.kind === 'scale') return JSON.stringify(a.scale) === JSON.stringify(b.scale);
   return false;
 }
 

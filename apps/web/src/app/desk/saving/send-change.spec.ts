@@ -2,6 +2,7 @@ import { provideHttpClient } from '@angular/common/http';
 import { HttpTestingController, provideHttpClientTesting } from '@angular/common/http/testing';
 import { TestBed } from '@angular/core/testing';
 import type { Mark } from '@stillstroke/contract/marks';
+import type { Scale } from '@stillstroke/contract/scale';
 import { beforeEach, describe, expect, it } from 'vitest';
 import { Api } from '../../core/api/api';
 import { markWith, testClip, testStrokes } from '../state/testing';
@@ -104,6 +105,35 @@ describe('ChangeSender', () => {
     await Promise.resolve();
     (await nextRequest(http, `/api/clips/${testClip.id}/marks`)).flush({ items: [], nextCursor: null });
     expect(await result).toEqual({ kind: 'done', version: 0 });
+  });
+
+  it('sends a scale with its version, brings the other one in a conflict, and takes one away that is gone', async () => {
+    const scale: Scale = {
+      kind: 'length',
+      plane: 'swimmer',
+      from: { x: 1, y: 2 },
+      to: { x: 300, y: 2 },
+      metres: 1,
+      uncertaintyM: 0,
+      check: null,
+    };
+    const scaleUrl = `/api/clips/${testClip.id}/scale`;
+    const sent = sender.send(pending({ kind: 'scale', scale }, 2));
+    const request = http.expectOne({ method: 'PUT', url: scaleUrl });
+    expect(request.request.body).toEqual({ scale, version: 2 });
+    const other = { scale: { ...scale, metres: 2 }, version: 5 };
+    request.flush(problem(409, 'changed-meanwhile', other), { status: 409, statusText: 'Conflict' });
+    expect(await sent).toEqual({
+      kind: 'conflict',
+      theirs: { wanted: { kind: 'scale', scale: other.scale }, version: 5 },
+    });
+    const gone = sender.send(pending({ kind: 'scale', scale: null }, 5));
+    http
+      .expectOne({ method: 'DELETE', url: `${scaleUrl}?version=5` })
+      .flush(problem(404, 'not-found'), { status: 404, statusText: 'Not Found' });
+    await Promise.resolve();
+    (await nextRequest(http, scaleUrl)).flush({ scale: null, version: 0 });
+    expect(await gone).toEqual({ kind: 'done', version: 0 });
   });
 
   it('tells a clip that is gone from a thing that is gone', async () => {

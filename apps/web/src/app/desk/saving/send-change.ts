@@ -2,6 +2,7 @@ import type { Api } from '../../core/api/api';
 import { problemOf } from '../../core/api/problem-of';
 import type { Clip } from '@stillstroke/contract/clip-facts';
 import { getClip, putCalibration, updateClip } from '@stillstroke/contract/clips';
+import { clipScaleSchema, deleteScale, getScale, putScale, type Scale } from '@stillstroke/contract/scale';
 import { deleteMark, listMarks, markSchema, putMark } from '@stillstroke/contract/marks';
 import {
   createStroke,
@@ -66,6 +67,8 @@ export class ChangeSender {
           items.find(({ id }) => id === wanted.id),
         );
       }
+      case 'scale':
+        return theirScale(await answer(this.api.call(getScale, { params })));
       case 'plumb':
       case 'facts':
         return theirClip(wanted, await answer(this.api.call(getClip, { params })));
@@ -83,6 +86,8 @@ export class ChangeSender {
       case 'plumb':
         await answer(this.api.call(putCalibration, { params, body: { plumb: wanted.plumb } }));
         return 1;
+      case 'scale':
+        return this.deliverScale(wanted.scale, base);
       case 'facts':
         await answer(this.api.call(updateClip, { params, body: wanted.facts }));
         return 1;
@@ -100,6 +105,15 @@ export class ChangeSender {
       return (await answer(this.api.call(putMark, { params, body }))).version;
     }
     await answer(this.api.call(deleteMark, { params, query: base > 0 ? { version: base } : {} }));
+    return 0;
+  }
+
+  private async deliverScale(scale: Scale | null, base: number): Promise<number> {
+    const params = { id: this.clipId };
+    if (scale) {
+      return (await answer(this.api.call(putScale, { params, body: { scale, version: base } }))).version;
+    }
+    await answer(this.api.call(deleteScale, { params, query: base > 0 ? { version: base } : {} }));
     return 0;
   }
 
@@ -137,7 +151,8 @@ export class ChangeSender {
     try {
       const theirs = await this.fetchTheirs(wanted);
       if (theirs.version > 0) return { kind: 'later' };
-      const removed = !(wanted.kind === 'mark' && isComplete(wanted.mark)) && !isWholeStroke(wanted);
+      const there = wanted.kind === 'scale' ? wanted.scale !== null : isWholeStroke(wanted);
+      const removed = !(wanted.kind === 'mark' && isComplete(wanted.mark)) && !there;
       return removed ? { kind: 'done', version: 0 } : { kind: 'conflict', theirs };
     } catch (error) {
       return problemOf(error).status === 404 ? { kind: 'stopped', why: 'gone' } : { kind: 'later' };
@@ -157,6 +172,7 @@ function isWholeStroke(wanted: Wanted): boolean {
 function readTheirs(wanted: Wanted, current: unknown): Theirs {
   if (wanted.kind === 'mark') return theirMark(wanted, markSchema.safeParse(current).data);
   if (wanted.kind === 'stroke') return theirStroke(wanted, strokeSchema.safeParse(current).data);
+  if (wanted.kind === 'scale') return theirScale(clipScaleSchema.safeParse(current).data);
   return { wanted, version: 1 };
 }
 
@@ -180,8 +196,15 @@ function theirStroke(
   return { wanted: { kind: 'stroke', id, stroke: known }, version: stroke?.version ?? 0 };
 }
 
+function theirScale(there: ReturnType<typeof clipScaleSchema.parse> | undefined): Theirs {
+  return { wanted: { kind: 'scale', scale: there?.scale ?? null }, version: there?.version ?? 0 };
+}
+
 function theirClip(wanted: Wanted, clip: Clip): Theirs {
   const { view, travel, stroke, captureRateFactor, fieldOfView, plumb } = clip;
   if (wanted.kind === 'plumb') return { wanted: { kind: 'plumb', plumb }, version: 1 };
-  return { wanted: { kind: 'facts', facts: { view, travel, stroke, captureRateFactor, fieldOfView } }, version: 1 };
+  return {
+    wanted: { kind: 'facts', facts: { view, travel, stroke, captureRateFactor, fieldOfView } },
+    version: 1,
+  };
 }

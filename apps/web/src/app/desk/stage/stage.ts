@@ -24,6 +24,7 @@ import { drawLoupe, drawMoving, drawPicture, drawResting } from './stage-drawing
 import { followDesk } from './stage-following';
 import { StageModel } from './stage-model';
 import { PlumbEnds } from './plumb-ends';
+import { ScaleOverlay } from './scale-overlay';
 import { stageWords, troubleTitle } from './stage-words';
 
 let stagesMade = 0;
@@ -35,7 +36,7 @@ const CAPTION_WIDTH = 230;
  */
 @Component({
   selector: 'st-stage',
-  imports: [PlumbEnds],
+  imports: [PlumbEnds, ScaleOverlay],
   templateUrl: './stage.html',
   styleUrl: './stage.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,

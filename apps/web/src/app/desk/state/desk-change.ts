@@ -1,4 +1,5 @@
 import type { FieldOfView, Plumb, StrokeKind, Travel, View } from '@stillstroke/contract/clip-facts';
+import type { Scale } from '@stillstroke/contract/scale';
 import type { Arm } from '@stillstroke/contract/strokes';
 import { markKey, type DeskMark } from './desk-mark';
 import type { DeskStroke } from './desk-stroke';
@@ -30,9 +31,10 @@ export type DeskChange =
       readonly after: DeskStroke | null;
     }
   | { readonly kind: 'plumb'; readonly before: Plumb | null; readonly after: Plumb | null }
+  | { readonly kind: 'scale'; readonly before: Scale | null; readonly after: Scale | null }
   | { readonly kind: 'facts'; readonly before: ClipFacts; readonly after: ClipFacts };
 
-/** Names the thing that a change is about: `mark:left:168`, `stroke:<id>`, `plumb`, `facts`. */
+/** Names the thing that a change is about: `mark:left:168`, `stroke:<id>`, `plumb`, `scale`, `facts`. */
 export function thingOf(change: DeskChange): string {
   switch (change.kind) {
     case 'mark':
@@ -40,6 +42,7 @@ export function thingOf(change: DeskChange): string {
     case 'stroke':
       return `stroke:${change.id}`;
     case 'plumb':
+    case 'scale':
     case 'facts':
       return change.kind;
   }

@@ -1,5 +1,6 @@
 import { computed, signal } from '@angular/core';
 import type { Clip, Plumb } from '@stillstroke/contract/clip-facts';
+import type { Scale } from '@stillstroke/contract/scale';
 import type { Arm } from '@stillstroke/contract/strokes';
 import type { ClipFacts, DeskChange } from './desk-change';
 import { markKey, type DeskMark } from './desk-mark';
@@ -8,13 +9,15 @@ import type { DeskStroke } from './desk-stroke';
 /** A joint or plumb that is being dragged: shown and read as if it were there, not yet part of the clip. */
 export type Preview =
   | { readonly kind: 'mark'; readonly arm: Arm; readonly frame: number; readonly mark: DeskMark | null }
-  | { readonly kind: 'plumb'; readonly plumb: Plumb | null };
+  | { readonly kind: 'plumb'; readonly plumb: Plumb | null }
+  | { readonly kind: 'scale'; readonly scale: Scale };
 
 /** What has been put on the clip: marks, strokes, plumb, facts. Changed only by whole changes; shows a preview over them. */
 export class DeskFilm {
   private readonly storedMarks = signal<ReadonlyMap<string, DeskMark>>(new Map());
   private readonly storedStrokes = signal<readonly DeskStroke[]>([]);
   private readonly storedPlumb = signal<Plumb | null>(null);
+  private readonly storedScale = signal<Scale | null>(null);
   private readonly storedFacts;
   private readonly preview = signal<Preview | null>(null);
 
@@ -33,6 +36,10 @@ export class DeskFilm {
     const preview = this.preview();
     return preview?.kind === 'plumb' ? preview.plumb : this.storedPlumb();
   });
+  readonly scale = computed(() => {
+    const preview = this.preview();
+    return preview?.kind === 'scale' ? preview.scale : this.storedScale();
+  });
   readonly strokes = this.storedStrokes.asReadonly();
   readonly facts;
   readonly clip;
@@ -41,12 +48,14 @@ export class DeskFilm {
     private readonly given: Clip,
     strokes: readonly DeskStroke[],
     marks: readonly DeskMark[],
+    scale: Scale | null = null,
   ) {
     const { view, travel, stroke, captureRateFactor, fieldOfView } = given;
     this.storedFacts = signal<ClipFacts>({ view, travel, stroke, captureRateFactor, fieldOfView });
     this.facts = this.storedFacts.asReadonly();
     this.clip = computed<Clip>(() => ({ ...this.given, ...this.storedFacts(), plumb: this.plumb() }));
     this.storedPlumb.set(given.plumb);
+    this.storedScale.set(scale);
     this.storedStrokes.set(inOrder(strokes));
     this.storedMarks.set(new Map(marks.map((mark) => [markKey(mark.arm, mark.frame), mark])));
   }
@@ -56,8 +65,8 @@ export class DeskFilm {
     return this.storedMarks().get(markKey(arm, frame)) ?? null;
   }
 
-  stored(): { readonly plumb: Plumb | null } {
-    return { plumb: this.storedPlumb() };
+  stored(): { readonly plumb: Plumb | null; readonly scale: Scale | null } {
+    return { plumb: this.storedPlumb(), scale: this.storedScale() };
   }
 
   show(preview: Preview | null): void {
@@ -85,6 +94,9 @@ export class DeskFilm {
       }
       case 'plumb':
         this.storedPlumb.set(change.after);
+        break;
+      case 'scale':
+        this.storedScale.set(change.after);
         break;
       case 'facts':
         this.storedFacts.set(change.after);

@@ -25,6 +25,8 @@ export const historyPolicies = {
   'remove-stroke': 'step',
   'set-plumb': 'step',
   'set-facts': 'merge',
+  'set-scale': 'step',
+  'nudge-scale': 'merge',
   preview: 'never',
   'go-to-frame': 'never',
   'choose-arm-or-joint': 'never',

@@ -1,5 +1,6 @@
 import { computed, signal, type Signal } from '@angular/core';
 import type { Clip } from '@stillstroke/contract/clip-facts';
+import type { Scale } from '@stillstroke/contract/scale';
 import type { Mark } from '@stillstroke/contract/marks';
 import type { Arm, Stroke } from '@stillstroke/contract/strokes';
 import type { Joint } from '@stillstroke/geometry/arm';
@@ -12,9 +13,11 @@ import { markKey, type DeskMark } from './desk-mark';
 import { DeskPlace } from './desk-place';
 import { DeskPlay } from './desk-play';
 import { DeskReadings, type FrameReading } from './desk-readings';
+import { DeskView } from './desk-view';
 import { deskStrokeOf, isWhole, nameStroke, type DeskStroke } from './desk-stroke';
 import { Marking } from './marking';
 import { needWords, nextToMark, stillToMark, type Progress } from './next-to-mark';
+import { ScaleCommands } from './scale-commands';
 import { SetUpCommands } from './set-up-commands';
 import { StrokeCommands } from './stroke-commands';
 
@@ -25,6 +28,7 @@ export interface DeskInput {
   readonly frameTimesUs: readonly number[];
   readonly strokes: readonly (Stroke | DeskStroke)[];
   readonly marks: readonly (Mark | DeskMark)[];
+  readonly scale?: Scale | null;
   /** False for those who may look only: every command then does nothing. */
   readonly canEdit: boolean;
   readonly newId?: () => string;
@@ -43,6 +47,8 @@ export type DeskTask =
  * - `marking`: joints (place, preview while dragging, commit, nudge, remove)
  * - `events`: strokes (set an event on the frame, breath, remove)
  * - `setUp`: plumb and facts of the clip
+ * - `scale`: known length or rectangle, and the measuring line
+ * - `view`: cautions of the camera's view
  * - `play`: whether the clip is to play
  * - `readings`: angles and measures of all marks and strokes
  */
@@ -52,6 +58,8 @@ export class DeskState {
   readonly marking: Marking;
   readonly events: StrokeCommands;
   readonly setUp: SetUpCommands;
+  readonly scale: ScaleCommands;
+  readonly view: DeskView;
   readonly play = new DeskPlay();
   readonly readings: DeskReadings;
 
@@ -89,7 +97,12 @@ export class DeskState {
   constructor(input: DeskInput) {
     this.canEdit = input.canEdit;
     this.frameTimesUs = signal(input.frameTimesUs).asReadonly();
-    const film = new DeskFilm(input.clip, input.strokes.map(toDeskStroke), input.marks.map(toDeskMark));
+    const film = new DeskFilm(
+      input.clip,
+      input.strokes.map(toDeskStroke),
+      input.marks.map(toDeskMark),
+      input.scale,
+    );
     const place = new DeskPlace(this.frameTimesUs);
     const core = new DeskCore(film, place, this.history, input.canEdit);
     [this.film, this.place, this.core] = [film, place, core];
@@ -108,6 +121,15 @@ export class DeskState {
       strokes: film.strokes,
     });
     this.readings = readings;
+    this.scale = new ScaleCommands(core, readings.context);
+    this.view = new DeskView({
+      clip: film.clip,
+      readings,
+      frame: place.frame,
+      arm: place.arm,
+      stroke: this.currentStroke,
+      scale: this.scale.fitted,
+    });
 
     this.plumbAssumed = computed(() => film.plumb() === null);
     this.task = computed(() => this.taskNow());
@@ -238,6 +260,7 @@ export class DeskState {
   private taskNow(): DeskTask {
     if (!this.canEdit || this.play.playing()) return { kind: 'look' };
     if (this.setUp.drawingPlumb()) return { kind: 'plumb' };
+    if (this.scale.placing()) return { kind: 'look' };
     const joint = this.marking.missing();
     return joint === null ? { kind: 'look' } : { kind: 'place', arm: this.arm(), joint };
   }
