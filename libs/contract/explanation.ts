@@ -44,6 +44,7 @@ export const strokeExplanationSchema = z.strictObject({
   verticalToleranceDeg: z.number(),
   /** Standard uncertainty of a placed joint per coordinate, pixels. */
   jointUncertaintyPx: z.strictObject({ shoulder: z.number(), elbow: z.number(), wrist: z.number() }),
+  jointUncertaintyOwn: z.boolean().describe('Found by marking again, not the default for the size'),
   eventErrorFrames: z.number().describe('Half-width in frames within which a chosen event is taken to lie'),
 });
 

@@ -53,6 +53,7 @@ export function explainStroke(
     captureRateFactor: clip.captureRateFactor,
     verticalToleranceDeg: context.verticalToleranceDeg ?? VERTICAL_TOLERANCE_DEG,
     jointUncertaintyPx: context.jointUncertaintyPx,
+    jointUncertaintyOwn: clip.jointShoulderPx !== null,
     eventErrorFrames: context.eventErrorFrames ?? EVENT_ERROR_FRAMES,
   };
 }

@@ -89,6 +89,7 @@ export class DeskExplainer {
       captureRateFactor: clip.captureRateFactor,
       verticalToleranceDeg: context.verticalToleranceDeg ?? VERTICAL_TOLERANCE_DEG,
       jointUncertaintyPx: context.jointUncertaintyPx,
+      jointUncertaintyOwn: clip.jointUncertaintyOwn,
       eventErrorFrames: context.eventErrorFrames ?? EVENT_ERROR_FRAMES,
     };
     return explainMeasure(said);

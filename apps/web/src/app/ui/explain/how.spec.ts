@@ -42,6 +42,7 @@ const said: StrokeExplanation = {
   captureRateFactor: 1,
   verticalToleranceDeg: 15,
   jointUncertaintyPx: { shoulder: 3, elbow: 2, wrist: 2 },
+  jointUncertaintyOwn: false,
   eventErrorFrames: 1,
 };
 

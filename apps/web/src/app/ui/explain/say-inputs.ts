@@ -23,6 +23,7 @@ export function sayClip(clip: {
   readonly plumb: Plumb | null;
   readonly travel: Travel;
   readonly jointUncertaintyPx: { readonly shoulder: number; readonly elbow: number; readonly wrist: number };
+  readonly jointUncertaintyOwn: boolean;
 }): ExplainedInput[] {
   const { shoulder, elbow, wrist } = clip.jointUncertaintyPx;
   return [
@@ -30,7 +31,11 @@ export function sayClip(clip: {
     { name: 'Travel in the picture', value: `to the ${clip.travel}` },
     {
       name: 'Spread of a placed joint, pixels',
-      value: `shoulder ${fixed(shoulder, 1)}, elbow ${fixed(elbow, 1)}, wrist ${fixed(wrist, 1)}`,
+      value: `shoulder ${fixed(shoulder, 1)}, elbow ${fixed(elbow, 1)}, wrist ${fixed(wrist, 1)}; ${
+        clip.jointUncertaintyOwn
+          ? 'found by marking again, by whoever placed most of the marks'
+          : 'the default for a picture of this size'
+      }`,
     },
   ];
 }
