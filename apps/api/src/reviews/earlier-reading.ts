@@ -10,6 +10,7 @@ import { sessionChange, type ChangeVerdict } from '@stillstroke/geometry/trend/c
 import { and, desc, eq, isNotNull, ne } from 'drizzle-orm';
 import { standNow, type Standing } from './reading-stand';
 import type { Reader, ReviewRow } from './review-reach';
+import { targetWords } from './target-words';
 
 /** How many readings that were sent before are looked through for the same measure. */
 const LOOK_BACK = 400;
@@ -32,7 +33,8 @@ export class LiveReadings {
 
   standOf(source: ReadingSource): ReadingStand {
     const stand = standNow(this.db, this.review.athleteId, source);
-    return { ...stand, earlier: this.earlierOf(source, stand) };
+    const target = targetWords(this.db, this.review.athleteId, stand);
+    return { ...stand, target, earlier: this.earlierOf(source, stand) };
   }
 
   /** Means of sessions alone are set against each other: single strokes and frames differ by chance. */

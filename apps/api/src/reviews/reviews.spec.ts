@@ -211,6 +211,29 @@ describe('sending', () => {
     expect((await get(id)).findings).toEqual(sent.findings);
   });
 
+  it('copies the words of the target, the arm’s own before one for both', async () => {
+    const setTarget = async (arm: string, high: number, words: string) => {
+      const body = { measure: 'verticalAt', arm, low: null, high, words };
+      const answer = await coach.mutate('post', `/api/athletes/${club.ids.athletes.own}/targets`).send(body);
+      expect(answer.status, answer.text).toBe(201);
+      return answer.body as { id: string; version: number };
+    };
+    const { id } = await ready();
+    const target = async () => (await get(id)).findings[0]?.readings[0]?.stand.target;
+    expect(await target()).toBeNull();
+    await setTarget('both', 0.5, 'By the middle');
+    expect(await target()).toBe('By the middle (up to 50 %)');
+    const own = await setTarget('right', 0.335, 'Early on the right');
+    expect(await target()).toBe('Early on the right (up to 33.5 %)');
+    await send(id);
+    const changed = await coach
+      .mutate('patch', `/api/targets/${own.id}`)
+      .send({ version: own.version, high: 0.9, words: 'Later is fine' });
+    expect(changed.status, changed.text).toBe(200);
+    await coach.mutate('delete', `/api/targets/${own.id}?version=${own.version + 1}`);
+    expect(await target()).toBe('Early on the right (up to 33.5 %)');
+  });
+
   it('does not freeze before: a draft follows the marks, and says what is gone', async () => {
     enter(clipId, [0.5]);
     const { id, finding } = await ready();
