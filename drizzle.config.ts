@@ -12,6 +12,7 @@ export default defineConfig({
     './libs/db/schema/targets.ts',
     './libs/db/schema/scale.ts',
     './libs/db/schema/view.ts',
+    './libs/db/schema/mail.ts',
   ],
   out: './libs/db/migrations',
   casing: 'snake_case',

@@ -22,7 +22,7 @@ export const signedInUserSchema = z.strictObject({
 });
 export type SignedInUser = z.infer<typeof signedInUserSchema>;
 
-const userAnswer = z.strictObject({ user: signedInUserSchema });
+export const userAnswer = z.strictObject({ user: signedInUserSchema });
 
 export const signIn = endpoint({
   method: 'post',

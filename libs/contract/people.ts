@@ -34,7 +34,11 @@ export const listPeople = endpoint({
 /** The link is in this answer and nowhere else: only a hash of it is stored. */
 const invitedSchema = z.strictObject({
   person: personSchema,
-  invitation: z.strictObject({ url: z.string(), expiresAt: instantSchema }),
+  invitation: z.strictObject({
+    url: z.string(),
+    expiresAt: instantSchema,
+    mailed: z.boolean().describe('Whether a mail with the link is on its way to the person'),
+  }),
 });
 
 export const invitePerson = endpoint({

@@ -15,6 +15,7 @@ export const problemCodes = [
   'name-taken',
   'weak-password',
   'invitation-spent',
+  'password-link-spent',
   'events-out-of-order',
   'frame-out-of-range',
   'strokes-overlap',

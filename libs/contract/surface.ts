@@ -7,6 +7,7 @@ import * as explanation from './explanation';
 import * as exports from './export';
 import * as health from './health';
 import * as imports from './import';
+import * as mail from './mail';
 import * as marks from './marks';
 import * as measures from './measures';
 import * as people from './people';
@@ -51,4 +52,5 @@ export const surface: readonly Endpoint[] = [
   targets,
   exports,
   imports,
+  mail,
 ].flatMap((file) => Object.values(file).filter(isEndpoint));

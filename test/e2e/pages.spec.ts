@@ -49,6 +49,8 @@ async function look(page: Page, path: string, name: string): Promise<void> {
 test('pages before signing in', async ({ page }) => {
   await look(page, '/sign-in', 'sign-in');
   await look(page, '/invitation/nonsense-nonsense-nonsense', 'invitation-spent');
+  await look(page, '/sign-in/forgot', 'forgot-password');
+  await look(page, '/new-password/nonsense-nonsense-nonsense', 'new-password-spent');
 });
 
 test('pages of a coach', async ({ page }) => {
@@ -69,6 +71,7 @@ test('pages of an admin', async ({ page }) => {
   await signInAs(page, 'admin@tarnvalley.example');
   await look(page, '/club', 'club-people');
   await look(page, '/club/squads', 'club-squads');
+  await look(page, '/club/outbox', 'club-outbox');
 });
 
 test('pages of an athlete', async ({ page }) => {
@@ -76,5 +79,6 @@ test('pages of an athlete', async ({ page }) => {
   const { athleteId, clipId } = await findInes(page);
   await look(page, `/athletes/${athleteId}`, 'own-page');
   await look(page, `/clips/${clipId}`, 'desk-read-only');
+  await look(page, '/mail', 'mail');
   await look(page, '/club', 'forbidden');
 });

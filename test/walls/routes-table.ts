@@ -3,6 +3,8 @@ import { marks, strokes } from '@stillstroke/db/schema/film';
 import { placeTarget } from '../../apps/api/src/targets/test-targets';
 import { clipScales } from '@stillstroke/db/schema/scale';
 import { issueInvitation } from '../../apps/api/src/invitations/issue';
+import { linkKey } from '../../apps/api/src/mail/link-token';
+import { placeGivenUpMail, placeReset } from '../../apps/api/src/mail/test-mails';
 import { placeClip, placeSession } from '../../apps/api/src/media/test-films';
 import { emailOf, testPassword, type ClubIds, type TestClub } from '../../apps/api/src/platform/test-club';
 import { placeRoundThings, roundRoutes, type RoundThings } from './round-routes';
@@ -36,6 +38,9 @@ export interface Things extends ClubIds, ReviewThings, RoundThings {
   readonly strokeId: string;
   readonly targetId: string;
   readonly token: string;
+  readonly resetToken: string;
+  /** A mail to `coach` that was given up. */
+  readonly mailId: string;
 }
 
 export type Statuses = readonly [
@@ -96,7 +101,7 @@ export function placeThings(club: TestClub): Things {
     .run();
   const targetId = placeTarget(context, ids.athletes.own);
   context.db.insert(clipScales).values({ clipId, scale, updatedAt }).run();
-  const { token } = issueInvitation(context.db, context.now(), ids.users.guardian);
+  const { token } = issueInvitation(context.db, context.now(), ids.users.guardian, linkKey(context.settings));
   return {
     ...ids,
     ...placeReviewThings(club),
@@ -106,6 +111,8 @@ export function placeThings(club: TestClub): Things {
     strokeId,
     targetId,
     token,
+    resetToken: placeReset(club),
+    mailId: placeGivenUpMail(club),
   };
 }
 
@@ -175,6 +182,47 @@ export const routes: readonly RouteRow[] = [
     path: ({ token }) => `/api/invitations/${token}/accept`,
     body: () => ({ password: 'seven herons over weir' }),
     statuses: open,
+  },
+
+  {
+    // Another address each time: wishes for one are limited.
+    route: 'post /api/auth/password-wish',
+    path: () => '/api/auth/password-wish',
+    body: () => ({ email: `${randomUUID()}@tarn.example` }),
+    statuses: [204, 204, 204, 204, 204, 204, 204, 204, 204, 204],
+  },
+  {
+    route: 'get /api/password-resets/:token',
+    path: ({ resetToken }) => `/api/password-resets/${resetToken}`,
+    statuses: open,
+  },
+  {
+    route: 'post /api/password-resets/:token',
+    path: ({ resetToken }) => `/api/password-resets/${resetToken}`,
+    body: () => ({ password: 'seven herons over weir' }),
+    statuses: open,
+  },
+  {
+    route: 'get /api/mail-wishes',
+    path: () => '/api/mail-wishes',
+    statuses: [401, 200, 200, 200, 200, 200, 200, 200, 200, 200],
+  },
+  {
+    route: 'put /api/mail-wishes/:kind',
+    path: () => '/api/mail-wishes/answer',
+    body: () => ({ on: false }),
+    statuses: [401, 200, 200, 200, 200, 200, 200, 200, 200, 200],
+  },
+  { route: 'get /api/outbox', path: () => '/api/outbox', statuses: admins(200) },
+  {
+    route: 'get /api/outbox/:id',
+    path: ({ mailId }) => `/api/outbox/${mailId}`,
+    statuses: [401, 200, 404, 404, 404, 404, 404, 404, 404, 404],
+  },
+  {
+    route: 'post /api/outbox/:id/retry',
+    path: ({ mailId }) => `/api/outbox/${mailId}/retry`,
+    statuses: adminsHere(200),
   },
 
   { route: 'get /api/people', path: () => '/api/people', statuses: admins(200) },

@@ -43,7 +43,8 @@ describe.each(routes)('$route', (row) => {
   );
 });
 
-const isPublic = (route: string) => /\/(auth\/(sign-in|page)|invitations\/|health|openapi)/.test(route);
+const isPublic = (route: string) =>
+  /\/(auth\/(sign-in|page|password-wish)|password-resets\/|invitations\/|health|openapi)/.test(route);
 
 async function statusFor({ route, path, body, query }: RouteRow, caller: Caller): Promise<number> {
   const browser = browsers.get(caller);

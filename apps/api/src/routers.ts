@@ -6,8 +6,10 @@ import { explanationsRoutes } from './explanations/explanations.routes';
 import { exportsRoutes } from './exports/exports.routes';
 import { importsRoutes } from './imports/imports.routes';
 import { invitationsRoutes } from './invitations/invitations.routes';
+import { mailRoutes } from './mail/mail.routes';
 import { marksRoutes } from './marks/marks.routes';
 import { measuresRoutes } from './measures/measures.routes';
+import { passwordResetRoutes } from './password-reset/password-reset.routes';
 import { peopleRoutes } from './people/people.routes';
 import type { AppContext } from './platform/context';
 import { repeatabilityRoutes } from './repeatability/repeatability.routes';
@@ -45,4 +47,6 @@ export const routers: readonly RouterFactory[] = [
   targetsRoutes,
   exportsRoutes,
   importsRoutes,
+  mailRoutes,
+  passwordResetRoutes,
 ];

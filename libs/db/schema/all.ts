@@ -1,5 +1,6 @@
 import * as club from './club';
 import * as film from './film';
+import * as mail from './mail';
 import * as repeatability from './repeatability';
 import * as review from './review';
 import * as scale from './scale';
@@ -17,4 +18,5 @@ export const schema = {
   ...targets,
   ...scale,
   ...view,
+  ...mail,
 };

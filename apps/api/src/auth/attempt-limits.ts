@@ -18,50 +18,105 @@ export const attemptLimits = {
   account: { attempts: 60, windowMs: 30 * minute },
 } as const;
 
+/** Mails with a new password that may be asked for in a window, whether there is such an account or not. */
+export const wishLimits = {
+  accountFromAddress: { attempts: 3, windowMs: 15 * minute },
+  address: { attempts: 30, windowMs: 15 * minute },
+  account: { attempts: 8, windowMs: 60 * minute },
+} as const;
+
+interface Limit {
+  readonly limit: { readonly attempts: number; readonly windowMs: number };
+  readonly keyOf: (account: string, address: string, req: Request) => string;
+  /** Whether it counts by account: a body without one is then let through to be refused as malformed. */
+  readonly needsAccount: boolean;
+  readonly countSuccess: boolean;
+  /** What there was too much of, as in "Too many …". */
+  readonly what: string;
+}
+
+function limiter(
+  context: AppContext,
+  { limit, keyOf, needsAccount, countSuccess, what }: Limit,
+): RequestHandler {
+  return rateLimit({
+    windowMs: limit.windowMs,
+    limit: limit.attempts,
+    store: new AttemptCounts(context.now),
+    skipSuccessfulRequests: !countSuccess,
+    standardHeaders: false,
+    legacyHeaders: false,
+    skip: (req) => needsAccount && accountIn(req) === null,
+    keyGenerator: (req) => keyOf(accountIn(req) ?? '', ipKeyGenerator(req.ip ?? ''), req),
+    handler: (req, res, next) => {
+      const resetsAt = (req as Request & { rateLimit?: { resetTime?: Date } }).rateLimit?.resetTime;
+      next(tooMany(res, what, (resetsAt?.getTime() ?? 0) - context.now().getTime()));
+    },
+  });
+}
+
 /**
  * Limits guessing without shutting a person out of their own account: strict for one account from one address; wide for
  * one address; wide for one account from anywhere, where browsers that have signed in to it before are counted apart
  * from strangers. Successful attempts do not count.
  */
 export function attemptLimiters(context: AppContext, known: KnownBrowsers): RequestHandler[] {
-  const limiter = (
-    limit: { attempts: number; windowMs: number },
-    keyOf: (account: string, address: string, req: Request) => string,
-    needsAccount: boolean,
-  ) =>
-    rateLimit({
-      windowMs: limit.windowMs,
-      limit: limit.attempts,
-      store: new AttemptCounts(context.now),
-      skipSuccessfulRequests: true,
-      standardHeaders: false,
-      legacyHeaders: false,
-      skip: (req) => needsAccount && accountIn(req) === null,
-      keyGenerator: (req) => keyOf(accountIn(req) ?? '', ipKeyGenerator(req.ip ?? ''), req),
-      handler: (req, res, next) => {
-        const resetsAt = (req as Request & { rateLimit?: { resetTime?: Date } }).rateLimit?.resetTime;
-        next(tooMany(res, (resetsAt?.getTime() ?? 0) - context.now().getTime()));
-      },
-    });
+  const shared = { countSuccess: false, what: 'attempts to sign in' };
   return [
-    limiter(attemptLimits.address, (_account, address) => address, false),
-    limiter(attemptLimits.accountFromAddress, (account, address) => `${address} ${account}`, true),
-    limiter(
-      attemptLimits.account,
-      (account, _address, req) => `${known.isKnown(req, account) ? 'known' : 'stranger'} ${account}`,
-      true,
-    ),
+    limiter(context, {
+      ...shared,
+      limit: attemptLimits.address,
+      keyOf: (_account, address) => address,
+      needsAccount: false,
+    }),
+    limiter(context, {
+      ...shared,
+      limit: attemptLimits.accountFromAddress,
+      keyOf: (account, address) => `${address} ${account}`,
+      needsAccount: true,
+    }),
+    limiter(context, {
+      ...shared,
+      limit: attemptLimits.account,
+      keyOf: (account, _address, req) => `${known.isKnown(req, account) ? 'known' : 'stranger'} ${account}`,
+      needsAccount: true,
+    }),
   ];
 }
 
-function tooMany(res: Response, waitMs: number): HttpProblem {
+/** Limits how many mails with a new password can be made to go out: every wish counts, granted or not. */
+export function wishLimiters(context: AppContext): RequestHandler[] {
+  const shared = { countSuccess: true, what: 'mails asked for' };
+  return [
+    limiter(context, {
+      ...shared,
+      limit: wishLimits.address,
+      keyOf: (_account, address) => address,
+      needsAccount: false,
+    }),
+    limiter(context, {
+      ...shared,
+      limit: wishLimits.accountFromAddress,
+      keyOf: (account, address) => `${address} ${account}`,
+      needsAccount: true,
+    }),
+    limiter(context, {
+      ...shared,
+      limit: wishLimits.account,
+      keyOf: (account) => account,
+      needsAccount: true,
+    }),
+  ];
+}
+
+function tooMany(res: Response, what: string, waitMs: number): HttpProblem {
   const seconds = Math.max(1, Math.ceil(waitMs / 1000));
   res.setHeader('Retry-After', String(seconds));
   const minutes = Math.ceil(seconds / 60);
   return new HttpProblem(
     429,
     'too-many-attempts',
-    `Too many attempts to sign in. Try again in ${minutes === 1 ? 'a minute' : `${minutes} minutes`}.`,
+    `Too many ${what}. Try again in ${minutes === 1 ? 'a minute' : `${minutes} minutes`}.`,
   );
 }
 

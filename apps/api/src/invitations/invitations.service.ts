@@ -4,6 +4,7 @@ import { invitations } from '@stillstroke/db/schema/sign-in';
 import { and, eq, gt, isNull } from 'drizzle-orm';
 import { activeUser, endSignIns } from '../auth/accounts';
 import { hashPassword } from '../auth/passwords';
+import { spendResets } from '../password-reset/spend-resets';
 import type { AppContext } from '../platform/context';
 import { HttpProblem } from '../platform/problem';
 import { tokenHash } from './issue';
@@ -44,6 +45,7 @@ export async function acceptInvitation(
       .run();
     if (used.changes !== 1) throw spent();
     tx.update(users).set({ passwordHash }).where(eq(users.id, invited.userId)).run();
+    spendResets(tx, invited.userId, now());
     endSignIns(tx, invited.userId);
   });
   const user = activeUser(db, invited.userId);

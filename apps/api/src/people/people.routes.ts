@@ -1,5 +1,4 @@
 import * as calls from '@stillstroke/contract/people';
-import type { Request } from 'express';
 import { Router } from 'express';
 import { invitationUrl } from '../invitations/issue';
 import type { AppContext } from '../platform/context';
@@ -8,23 +7,20 @@ import { invitePerson, listPeople, reinvitePerson, updatePerson, type Invited } 
 
 export function peopleRoutes(context: AppContext): Router {
   const router = Router();
-  // Without a public address set, the one that the admin came by.
-  const baseOf = (req: Request) =>
-    context.settings.publicUrl ?? `${req.protocol}://${req.get('host') ?? 'localhost'}`;
-  const withLink = (req: Request, { person, invitation }: Invited) => ({
+  const { publicUrl, mail } = context.settings;
+  const withLink = ({ person, invitation }: Invited) => ({
     person,
     invitation: {
-      url: invitationUrl(baseOf(req), invitation.token),
+      url: invitationUrl(publicUrl, invitation.token),
       expiresAt: invitation.expiresAt,
+      mailed: mail.server !== null,
     },
   });
   mount(router, calls.listPeople, ({ user, query }) => listPeople(context, user, query));
-  mount(router, calls.invitePerson, ({ user, body, req }) =>
-    withLink(req, invitePerson(context, user, body)),
-  );
+  mount(router, calls.invitePerson, ({ user, body }) => withLink(invitePerson(context, user, body)));
   mount(router, calls.updatePerson, ({ user, params, body }) => updatePerson(context, user, params.id, body));
-  mount(router, calls.reinvitePerson, ({ user, params, req }) =>
-    withLink(req, reinvitePerson(context, user, params.id)),
+  mount(router, calls.reinvitePerson, ({ user, params }) =>
+    withLink(reinvitePerson(context, user, params.id)),
   );
   return router;
 }

@@ -14,12 +14,15 @@ import { athletes, squadCoaches, squads, users } from '@stillstroke/db/schema/cl
 import { and, asc, count, desc, eq, inArray, isNotNull, isNull, ne, or } from 'drizzle-orm';
 import { endSignIns } from '../auth/accounts';
 import { issueInvitation, revokeInvitations, type IssuedInvitation } from '../invitations/issue';
+import { linkKey } from '../mail/link-token';
+import { queueMail } from '../mail/queue-mail';
 import type { AppContext } from '../platform/context';
 import { behind, readCursor, writeCursor } from '../platform/cursor';
 import { badField, HttpProblem, notFound } from '../platform/problem';
+import { spendResets } from '../password-reset/spend-resets';
 import { personAnswer, personAnswers, personRows } from './person-rows';
 
-type Context = Pick<AppContext, 'db' | 'now'>;
+type Context = Pick<AppContext, 'db' | 'now' | 'settings'>;
 
 export interface Invited {
   readonly person: Person;
@@ -79,7 +82,7 @@ export function invitePerson(
         .values({ id, clubId: user.clubId, name, email, role, athleteId: athleteId ?? null, createdAt })
         .run();
       setSquads(tx, id, squadIds);
-      return { invitation: issueInvitation(tx, context.now(), id), person: personAnswer(tx, id) };
+      return { invitation: invite(context, tx, id), person: personAnswer(tx, id) };
     });
   } catch (error) {
     if (!isUniqueViolation(error)) throw error;
@@ -99,9 +102,16 @@ export function reinvitePerson(context: Context, user: SignedInUser, personId: s
     throw new HttpProblem(409, 'conflict', `${person.name} is deactivated; take them back in first.`);
   }
   return db.transaction((tx) => ({
-    invitation: issueInvitation(tx, context.now(), person.id),
+    invitation: invite(context, tx, person.id),
     person: personAnswer(tx, person.id),
   }));
+}
+
+/** Makes the link and the mail with it. */
+function invite({ now, settings }: Context, tx: Db, personId: string): IssuedInvitation {
+  const invitation = issueInvitation(tx, now(), personId, linkKey(settings));
+  queueMail(tx, { kind: 'invitation', to: personId, data: { invitationId: invitation.id }, now: now() });
+  return invitation;
 }
 
 /** Changes an account of the club. Deactivating signs it out everywhere and spends its invitations. */
@@ -124,6 +134,7 @@ export function updatePerson(
       refuseLastAdmin(tx, person);
       endSignIns(tx, person.id);
       revokeInvitations(tx, person.id, context.now());
+      spendResets(tx, person.id, context.now());
     }
     tx.update(users)
       .set({ name: name ?? person.name, ...(deactivated !== undefined && { deactivatedAt }) })

@@ -1,5 +1,6 @@
 import { resolve } from 'node:path';
 import * as z from 'zod';
+import { smtpServerSchema, type SmtpServer } from './smtp-server';
 
 const megabyte = 1024 * 1024;
 
@@ -14,6 +15,10 @@ const decimal = (least: number, most: number) => {
 const oneOf = <T extends readonly [string, ...string[]]>(...words: T) =>
   z.enum(words, { error: `give ${words.join(' or ')}` });
 
+const publicUrlWords = 'give an address without a path, such as https://strokes.example';
+/** Scheme, host and port, nothing more. */
+const isOrigin = (text: string) => URL.canParse(text) && new URL(text).href === `${new URL(text).origin}/`;
+
 /** Environment variables and their defaults; everything the operator can set is here and in the README. */
 const environmentSchema = z.object({
   PORT: wholeNumber(0, 65_535).default(4300),
@@ -21,8 +26,11 @@ const environmentSchema = z.object({
   STILLSTROKE_DATA: z.string().default('./data'),
   STILLSTROKE_DEMO: oneOf('on', 'off').default('on'),
   STILLSTROKE_PUBLIC_URL: z
-    .url({ protocol: /^https?$/, error: 'give an address such as https://strokes.example' })
+    .url({ protocol: /^https?$/, error: publicUrlWords })
+    .refine((text) => isOrigin(text), { error: publicUrlWords })
     .optional(),
+  SMTP_URL: smtpServerSchema.optional(),
+  STILLSTROKE_MAIL_FROM: z.email({ error: 'give an address such as strokes@club.example' }).optional(),
   /** Set when a reverse proxy in front ends TLS: cookies become Secure and its address header is trusted. */
   STILLSTROKE_BEHIND_TLS: oneOf('on', 'off').default('off'),
   STILLSTROKE_MAX_CLIP_MB: wholeNumber(1, 20_480).default(2048),
@@ -38,8 +46,14 @@ export interface Settings {
   /** Absolute path of the data folder. */
   readonly dataFolder: string;
   readonly demo: boolean;
-  /** Address under which people reach the product, for links in invitations; null = from the request. */
-  readonly publicUrl: string | null;
+  /** Address under which people reach the product, for links; never taken from a request, whose sender may lie. */
+  readonly publicUrl: string;
+  readonly mail: {
+    /** Null: mails are written as files into the data folder's outbox. */
+    readonly server: SmtpServer | null;
+    /** Address that mails come from. */
+    readonly from: string;
+  };
   readonly behindTls: boolean;
   readonly limits: { readonly clipBytes: number; readonly clipMinutes: number; readonly pictureSide: number };
   readonly undoMinutes: number;
@@ -62,12 +76,17 @@ export function readSettings(environment: Record<string, string | undefined>): S
     );
   }
   const env = parsed.data;
+  const publicUrl = new URL(env.STILLSTROKE_PUBLIC_URL ?? `http://localhost:${env.PORT}`);
   return {
     port: env.PORT,
     host: env.STILLSTROKE_HOST,
     dataFolder: resolve(env.STILLSTROKE_DATA),
     demo: env.STILLSTROKE_DEMO === 'on',
-    publicUrl: env.STILLSTROKE_PUBLIC_URL ?? null,
+    publicUrl: publicUrl.origin,
+    mail: {
+      server: env.SMTP_URL ?? null,
+      from: env.STILLSTROKE_MAIL_FROM ?? `stillstroke@${publicUrl.hostname}`,
+    },
     behindTls: env.STILLSTROKE_BEHIND_TLS === 'on',
     limits: {
       clipBytes: env.STILLSTROKE_MAX_CLIP_MB * megabyte,

@@ -14,6 +14,12 @@ export const routes: Routes = [
     loadChildren: () => import('./invitation/invitation.routes'),
   },
   {
+    path: 'new-password/:token',
+    title: 'Your new password',
+    loadChildren: () => import('./new-password/new-password.routes'),
+  },
+  { path: 'mail', title: 'Mail', canActivate: [signedIn], loadChildren: () => import('./mail/mail.routes') },
+  {
     path: 'squad',
     title: 'Squad',
     canActivate: [onlyFor('coach', 'admin')],

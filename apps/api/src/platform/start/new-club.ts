@@ -3,6 +3,7 @@ import { emailSchema, nameSchema } from '@stillstroke/contract/fields';
 import { isUniqueViolation } from '@stillstroke/db/constraint';
 import { clubs, users } from '@stillstroke/db/schema/club';
 import { invitationUrl, issueInvitation } from '../../invitations/issue';
+import { linkKey } from '../../mail/link-token';
 import type { AppContext } from '../context';
 import { StartProblem } from './start-problem';
 
@@ -30,10 +31,9 @@ export function makeClub(context: AppContext, words: readonly string[]): string 
       tx.insert(users)
         .values({ id: userId, clubId, name: name.data, email: email.data, role: 'admin', createdAt })
         .run();
-      return issueInvitation(tx, now, userId);
+      return issueInvitation(tx, now, userId, linkKey(context.settings));
     });
-    const { publicUrl, port } = context.settings;
-    return invitationUrl(publicUrl ?? `http://localhost:${port}`, token);
+    return invitationUrl(context.settings.publicUrl, token);
   } catch (error) {
     if (!isUniqueViolation(error)) throw error;
     throw new StartProblem(`${email.data} already has an account: use another address.`);

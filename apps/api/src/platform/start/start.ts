@@ -4,6 +4,7 @@ import { createApp } from '../../app';
 import { demoAccounts } from '../../auth/demo-accounts';
 import { startPurging } from '../../media/purge';
 import { seedDemo } from '../../demo/seed';
+import { startSending } from '../../mail/sender';
 import { refreshOutdatedFigures } from '../../measures/figures';
 import { sweepFilms } from '../../media/sweep';
 import { sweepStills } from '../../stills/sweep-stills';
@@ -42,10 +43,11 @@ export async function start(options: StartOptions): Promise<() => Promise<void>>
     const app = createApp(context, { webFolder: options.webFolder });
     const { server, url } = await listen(app, settings);
     const stopPurging = startPurging(context);
+    const stopSending = startSending(context);
     for (const line of greeting(context, url)) options.print(line);
     return async () => {
       stopPurging();
-      await stopListening(server, stopBoundMs);
+      await Promise.all([stopListening(server, stopBoundMs), stopSending(stopBoundMs)]);
       close();
     };
   } catch (error) {

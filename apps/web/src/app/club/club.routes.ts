@@ -10,6 +10,11 @@ export default [
     children: [
       { path: '', pathMatch: 'full', redirectTo: 'people' },
       { path: 'people', title: 'People', component: PeoplePage },
+      {
+        path: 'outbox',
+        title: 'Outbox',
+        loadComponent: () => import('./outbox-page').then(({ OutboxPage }) => OutboxPage),
+      },
       { path: 'squads', title: 'Squads', component: SquadsPage },
     ],
   },

@@ -14,8 +14,13 @@ import type { Invited } from './show-link';
     <h2 mat-dialog-title>Invitation for {{ invited.person.name }}</h2>
     <mat-dialog-content>
       <p>
-        Send this link to {{ invited.person.name }} yourself. It is shown only now, works once, and until
-        {{ until }}.
+        @if (invited.invitation.mailed) {
+          A mail with this link is on its way to {{ invited.person.email }}. You can hand it over yourself
+          too.
+        } @else {
+          Send this link to {{ invited.person.name }} yourself: no mail server is set.
+        }
+        It is shown only now, works once, and until {{ until }}.
       </p>
       <mat-form-field appearance="outline" subscriptSizing="dynamic">
         <mat-label>Link</mat-label>

@@ -20,7 +20,11 @@ const owen: Person = {
 const masters = { id: 'masters', name: 'Masters squad', coaches: [], athleteCount: 5, deactivated: false };
 const invited = {
   person: { ...owen, id: 'petra', name: 'Petra Lund', status: 'invited' },
-  invitation: { url: 'https://club.example/invitation/abc', expiresAt: '2026-12-08T09:00:00.000Z' },
+  invitation: {
+    url: 'https://club.example/invitation/abc',
+    expiresAt: '2026-12-08T09:00:00.000Z',
+    mailed: false,
+  },
 };
 
 describe('PeoplePage', () => {

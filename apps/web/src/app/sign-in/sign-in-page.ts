@@ -3,7 +3,7 @@ import { FormControl, FormGroup, ReactiveFormsModule, Validators } from '@angula
 import { MatButtonModule } from '@angular/material/button';
 import { MatFormFieldModule } from '@angular/material/form-field';
 import { MatInputModule } from '@angular/material/input';
-import { Router } from '@angular/router';
+import { Router, RouterLink } from '@angular/router';
 import { getSignInPage } from '@stillstroke/contract/auth';
 import { apiResource } from '../core/api/api';
 import { problemOf } from '../core/api/problem-of';
@@ -22,6 +22,7 @@ import { signInWords } from './sign-in-words';
     PlumbSign,
     ProblemMessage,
     ReactiveFormsModule,
+    RouterLink,
   ],
   templateUrl: './sign-in-page.html',
   styleUrl: './sign-in-page.scss',

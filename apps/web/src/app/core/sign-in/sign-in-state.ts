@@ -1,5 +1,6 @@
 import { inject, Injectable, signal } from '@angular/core';
 import { acceptInvitation, getMe, signIn, signOut, type SignedInUser } from '@stillstroke/contract/auth';
+import { resetPassword } from '@stillstroke/contract/mail';
 import { firstValueFrom, map, tap, type Observable } from 'rxjs';
 import { Api } from '../api/api';
 import { problemOf } from '../api/problem-of';
@@ -35,6 +36,13 @@ export class SignInState {
   acceptInvitation(token: string, password: string): Observable<SignedInUser> {
     return this.api
       .call(acceptInvitation, { params: { token }, body: { password } })
+      .pipe(map((answer) => this.settle(answer.user)));
+  }
+
+  /** Sets a new password through a link from a mail; the server signs the person in with it. */
+  resetPassword(token: string, password: string): Observable<SignedInUser> {
+    return this.api
+      .call(resetPassword, { params: { token }, body: { password } })
       .pipe(map((answer) => this.settle(answer.user)));
   }
 
