@@ -38,7 +38,6 @@ describe('OutboxPage', () => {
     expect(test.text).toContain('No mail server is set');
     expect(test.text).toContain('Links in them lead to https://strokes.example');
     test.press('Open the mail to Owen Hale');
-    const dialog = await vi.waitFor(async () => test.overlays.getHarness(MatDialogHarness));
     const written = {
       subject: 'Your invitation to Stillstroke',
       text: 'Hello Owen Hale,',
@@ -46,6 +45,7 @@ describe('OutboxPage', () => {
       file: 'outbox/m1.eml',
     };
     await test.answer('GET', '/api/outbox/m1', { ...mail, written });
+    const dialog = await test.overlays.getHarness(MatDialogHarness);
     expect(await dialog.getTitleText()).toBe('Your invitation to Stillstroke');
     expect(await dialog.getText()).toContain('Hello Owen Hale,');
     const source = document.querySelector('st-mail-text-dialog details pre');
@@ -57,7 +57,7 @@ describe('OutboxPage', () => {
     await open([mail, refused], 'server');
     expect(test.text).toContain('550 No such mailbox');
     expect(test.text).not.toContain('Open');
-    test.press('Try the mail to Ines Corrow again');
+    test.press('Try again: the mail to Ines Corrow');
     await test.answer('POST', '/api/outbox/m2/retry', { ...refused, status: 'waiting' });
     await test.request('GET', '/api/outbox');
   });
