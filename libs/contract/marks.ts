@@ -28,6 +28,12 @@ export const markSchema = z.strictObject({
 });
 export type Mark = z.infer<typeof markSchema>;
 
+/** A mark as saved, with the spread that all marks of its clip are read with now: a mark may change whose that is. */
+export const savedMarkSchema = markSchema.extend({
+  jointUncertaintyPx: z.strictObject({ shoulder: z.number(), elbow: z.number(), wrist: z.number() }),
+});
+export type SavedMark = z.infer<typeof savedMarkSchema>;
+
 const markParams = z.strictObject({
   id: idSchema,
   arm: armSchema,
@@ -56,7 +62,7 @@ export const putMark = endpoint({
     wrist: pointSchema,
     version: z.int().min(0).optional(),
   }),
-  answer: markSchema,
+  answer: savedMarkSchema,
 });
 
 export const deleteMark = endpoint({

@@ -154,6 +154,10 @@ export const measureAgreementSchema = z.strictObject({
   limits: intervalSchema,
   lowerLimitInterval: intervalSchema,
   upperLimitInterval: intervalSchema,
+  /** Standard deviation of a difference that placing the joints twice would leave, by the two coaches' own spreads. */
+  marking: z.number(),
+  /** The bias against it: none shown, no more than `marking`, or more. */
+  verdict: z.enum(['no-shift', 'small', 'large']),
   points: z.array(
     z.strictObject({ arm: armSchema, frame: frameSchema, mean: z.number(), difference: z.number() }),
   ),

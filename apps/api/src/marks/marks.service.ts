@@ -1,11 +1,16 @@
 import type { SignedInUser } from '@stillstroke/contract/auth';
 import type { BodyOf, ParamsOf, QueryOf } from '@stillstroke/contract/endpoint';
-import type { deleteMark as deleteCall, Mark, putMark as putCall } from '@stillstroke/contract/marks';
+import type {
+  deleteMark as deleteCall,
+  Mark,
+  putMark as putCall,
+  SavedMark,
+} from '@stillstroke/contract/marks';
 import type { Db } from '@stillstroke/db/open';
 import { preparedOnce } from '@stillstroke/db/prepared-once';
 import { marks } from '@stillstroke/db/schema/film';
 import { and, asc, eq, sql } from 'drizzle-orm';
-import type { ClipRow } from '../clips/clip-answer';
+import { jointUncertaintyOf, type ClipRow } from '../clips/clip-answer';
 import { clipRow } from '../measures/clip-reading';
 import { refreshClipFigures, refreshFiguresAt } from '../measures/figures';
 import type { AppContext } from '../platform/context';
@@ -44,7 +49,7 @@ export function putMark(
   user: SignedInUser,
   { id: clipId, ...place }: ParamsOf<typeof putCall>,
   { version, ...joints }: BodyOf<typeof putCall>,
-): Mark {
+): SavedMark {
   const { clip } = liveClip(db, user, clipId);
   checkFrame(clip, place.frame);
   checkJoints(joints, clip);
@@ -52,7 +57,7 @@ export function putMark(
   return db.transaction(
     (tx) => {
       const there = markAt(tx, clip.id, place);
-      if (there && isSame(there, fields)) return markAnswer(there, clip);
+      if (there && isSame(there, fields)) return savedAnswer(there, clip);
       if (version !== undefined && version !== (there?.version ?? 0))
         throw changedMeanwhile('mark', there ? markAnswer(there, clip) : null);
       const changed = { ...fields, updatedAt: now().toISOString(), updatedBy: user.id };
@@ -65,7 +70,7 @@ export function putMark(
         })
         .returning()
         .get();
-      return markAnswer(row, refreshReadings(tx, clip, place, settleMarkerAfter(tx, clip, user.id)));
+      return savedAnswer(row, refreshReadings(tx, clip, place, settleMarkerAfter(tx, clip, user.id)));
     },
     { behavior: 'immediate' },
   );
@@ -90,6 +95,10 @@ export function deleteMark(
     },
     { behavior: 'immediate' },
   );
+}
+
+function savedAnswer(row: typeof marks.$inferSelect, clip: ClipRow): SavedMark {
+  return { ...markAnswer(row, clip), jointUncertaintyPx: { ...jointUncertaintyOf(clip) } };
 }
 
 type Writer = Pick<Db, 'select' | 'insert' | 'delete' | 'update'>;

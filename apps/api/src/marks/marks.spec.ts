@@ -1,4 +1,4 @@
-import type { Mark } from '@stillstroke/contract/marks';
+import type { Mark, SavedMark } from '@stillstroke/contract/marks';
 import type { StrokeMeasures } from '@stillstroke/contract/measures';
 import { strokeFigures } from '@stillstroke/db/schema/film';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
@@ -34,7 +34,8 @@ describe('marks', () => {
   const put = async (body: object, to = path) => coach.mutate('put', to).send(body);
 
   it('answer their angles and how far they can be trusted', async () => {
-    const mark = (await put(joints)).body as Mark;
+    const { jointUncertaintyPx, ...mark } = (await put(joints)).body as SavedMark;
+    expect(jointUncertaintyPx).toEqual({ shoulder: 3, elbow: 2, wrist: 2 });
     expect(mark.angles.forearmDeg).toBeCloseTo(30, 9);
     expect(mark.angles.upperArmDeg).toBeCloseTo(60, 9);
     expect(mark.angles.elbowDeg).toBeCloseTo(150, 9);
@@ -74,7 +75,7 @@ describe('marks', () => {
   it('made on an older version are refused with what is there now', async () => {
     await put({ ...joints, version: 0 });
     const moved = { ...joints, wrist: { x: 1300, y: 700 } };
-    const second = (await put({ ...moved, version: 1 })).body as Mark;
+    const { jointUncertaintyPx: _, ...second } = (await put({ ...moved, version: 1 })).body as SavedMark;
     expect(second.version).toBe(2);
     const late = await put({ ...joints, version: 1 });
     expect(late.body).toMatchObject({ status: 409, code: 'changed-meanwhile', current: second });

@@ -2,16 +2,19 @@ import type { SignedInUser } from '@stillstroke/contract/auth';
 import type { Agreements, MeasureAgreement } from '@stillstroke/contract/repeatability';
 import { users } from '@stillstroke/db/schema/club';
 import { markingRounds, roundMarks } from '@stillstroke/db/schema/repeatability';
-import { agreement } from '@stillstroke/geometry/statistics/agreement';
+import { coachAgreement } from '@stillstroke/geometry/statistics/coach-agreement';
+import { type AngleName, anglesTwice } from '@stillstroke/geometry/uncertainty/own-uncertainty';
+import type { ClipAxes } from '@stillstroke/geometry/angles/arm-angles';
+import type { ArmMark } from '@stillstroke/geometry/arm';
 import {
-  type AngleName,
-  anglesTwice,
-  type ReadTwice,
-} from '@stillstroke/geometry/uncertainty/own-uncertainty';
+  armAngleUncertainty,
+  type JointUncertaintyPx,
+} from '@stillstroke/geometry/uncertainty/arm-uncertainty';
 import { and, eq, inArray, isNotNull, ne } from 'drizzle-orm';
 import { grouped } from '../measures/grouped';
 import type { AppContext } from '../platform/context';
 import { liveClip } from '../sessions/live-film';
+import { spreadOf, type Reader } from './marker';
 import { markedTwice, placedTwice, type TwiceRow } from './round-rows';
 
 type Pair = Agreements['items'][number];
@@ -47,7 +50,7 @@ export function getAgreement(
     (of) => {
       const [one] = of;
       if (!one?.row.firstBy) return [];
-      return [{ first: coach(one.row.firstBy), second: coach(one.againBy), ...agreementOf(of) }];
+      return [{ first: coach(one.row.firstBy), second: coach(one.againBy), ...agreementOf(db, of) }];
     },
   );
 }
@@ -58,25 +61,33 @@ function newestOfEach(rows: readonly TwiceRow[]): TwiceRow[] {
   return [...new Map(rows.map((row) => [key(row), row])).values()];
 }
 
-function agreementOf(rows: readonly TwiceRow[]): Pick<Pair, 'frames' | 'measures'> {
+function agreementOf(db: Reader, rows: readonly TwiceRow[]): Pick<Pair, 'frames' | 'measures'> {
   const read = rows.flatMap((twice) => {
     const placed = placedTwice(twice);
     const angles = placed && anglesTwice(placed);
-    return angles ? [{ arm: twice.row.arm, frame: twice.row.frame, angles }] : [];
+    if (!angles) return [];
+    const { clip, row, againBy } = twice;
+    const first = placingErrors(placed.first, placed.axes, spreadOf(db, clip, row.firstBy));
+    const second = placingErrors(placed.again, placed.axes, spreadOf(db, clip, againBy));
+    return first && second ? [{ arm: row.arm, frame: row.frame, angles, errors: { first, second } }] : [];
   });
   const of = (name: AngleName): MeasureAgreement | null => {
-    const pairs = read.map(({ angles }): ReadTwice => angles[name]);
-    const found = agreement(
-      pairs.map(({ first }) => first),
-      pairs.map(({ second }) => second),
+    const found = coachAgreement(
+      read.map(({ angles, errors }) => ({
+        ...angles[name],
+        firstUncertainty: errors.first[name],
+        secondUncertainty: errors.second[name],
+      })),
     );
     if (!found.ok) return null;
-    const { count: _, ...figures } = found.value;
-    const points = read.map(({ arm, frame, angles }) => {
-      const { first, second } = angles[name];
-      return { arm, frame, mean: (first + second) / 2, difference: first - second };
-    });
-    return { ...figures, points };
+    const { count: _, points, ...figures } = found.value;
+    return {
+      ...figures,
+      points: read.flatMap(({ arm, frame }, at) => {
+        const point = points[at];
+        return point ? [{ arm, frame, ...point }] : [];
+      }),
+    };
   };
   const [forearmDeg, upperArmDeg] = [of('forearmDeg'), of('upperArmDeg')];
   const [elbowDeg, elbowDropDeg] = [of('elbowDeg'), of('elbowDropDeg')];
@@ -85,4 +96,23 @@ function agreementOf(rows: readonly TwiceRow[]): Pick<Pair, 'frames' | 'measures
       ? { forearmDeg, upperArmDeg, elbowDeg, elbowDropDeg }
       : null;
   return { frames: read.length, measures };
+}
+
+/** How far placing alone leaves each angle open; the camera's lean is common to both readings and is left out. */
+function placingErrors(
+  mark: ArmMark,
+  axes: ClipAxes,
+  jointUncertaintyPx: JointUncertaintyPx,
+): Readonly<Record<AngleName, number>> | null {
+  const read = armAngleUncertainty(mark, { ...axes, jointUncertaintyPx });
+  if (!read.ok) return null;
+  const { parts } = read.value;
+  const of = (name: AngleName) =>
+    Math.hypot(...parts[name].filter(({ source }) => source !== 'roll').map(({ alone }) => alone));
+  return {
+    forearmDeg: of('forearmDeg'),
+    upperArmDeg: of('upperArmDeg'),
+    elbowDeg: of('elbowDeg'),
+    elbowDropDeg: of('elbowDropDeg'),
+  };
 }

@@ -3,9 +3,15 @@ import { users } from '@stillstroke/db/schema/club';
 import { clips, marks } from '@stillstroke/db/schema/film';
 import { markingFigures } from '@stillstroke/db/schema/repeatability';
 import { OWN_UNCERTAINTY_FRAMES, ownUncertaintyPx } from '@stillstroke/geometry/uncertainty/own-uncertainty';
+import {
+  defaultJointUncertaintyPx,
+  type JointUncertaintyPx,
+} from '@stillstroke/geometry/uncertainty/joint-uncertainty';
 import { count, desc, eq, max } from 'drizzle-orm';
 import type { ClipRow } from '../clips/clip-answer';
 
+/** A database or a transaction in it. */
+export type Reader = Pick<Db, 'select'>;
 type Writer = Pick<Db, 'select' | 'insert' | 'delete' | 'update'>;
 
 /**
@@ -45,18 +51,29 @@ function mainMarker(tx: Writer, clipId: string): string | null {
   return most?.userId ?? null;
 }
 
-function jointColumns(tx: Writer, clip: ClipRow, markerId: string | null) {
+/** A person's own spread in a clip's picture once it is known, else the default for its size. */
+export function spreadOf(tx: Reader, clip: ClipRow, userId: string | null): JointUncertaintyPx {
+  return ownSpread(tx, clip, userId) ?? defaultJointUncertaintyPx(clip);
+}
+
+function ownSpread(tx: Reader, clip: ClipRow, userId: string | null): JointUncertaintyPx | null {
   const own =
-    markerId === null
+    userId === null
       ? undefined
-      : tx.select().from(markingFigures).where(eq(markingFigures.userId, markerId)).get();
-  if (!own || own.frames < OWN_UNCERTAINTY_FRAMES) {
-    return { jointShoulderPx: null, jointElbowPx: null, jointWristPx: null };
-  }
-  const px = ownUncertaintyPx(clip, {
+      : tx.select().from(markingFigures).where(eq(markingFigures.userId, userId)).get();
+  if (!own || own.frames < OWN_UNCERTAINTY_FRAMES) return null;
+  return ownUncertaintyPx(clip, {
     shoulder: own.shoulderAt1080,
     elbow: own.elbowAt1080,
     wrist: own.wristAt1080,
   });
-  return { jointShoulderPx: px.shoulder, jointElbowPx: px.elbow, jointWristPx: px.wrist };
+}
+
+function jointColumns(tx: Writer, clip: ClipRow, markerId: string | null) {
+  const px = ownSpread(tx, clip, markerId);
+  return {
+    jointShoulderPx: px?.shoulder ?? null,
+    jointElbowPx: px?.elbow ?? null,
+    jointWristPx: px?.wrist ?? null,
+  };
 }

@@ -1,5 +1,5 @@
 import type { Clip } from '@stillstroke/contract/clip-facts';
-import type { Mark } from '@stillstroke/contract/marks';
+import type { Mark, SavedMark } from '@stillstroke/contract/marks';
 import type { StrokeMeasures } from '@stillstroke/contract/measures';
 import type { Agreements, MarkingFigures, MarkingRoundWithMarks } from '@stillstroke/contract/repeatability';
 import type { Trend } from '@stillstroke/contract/trend';
@@ -131,6 +131,50 @@ describe('marking again', () => {
     expect(await own()).toBe(false);
     expect((await admin.mutate('delete', `/api/clips/${clipId}/marks/left/300`)).status).toBe(204);
     expect(await own()).toBe(true);
+  });
+
+  it('stands in the very first mark on a clip that nobody had marked, so that the Desk can follow', async () => {
+    await markAgain(coach, await start(coach, 12), 8);
+    const sessionId = placeSession(club.context, club.ids.athletes.own);
+    const fresh = placeClip(club.context, club.ids.athletes.own, sessionId).id;
+    const spread = async () => (await read<Clip>(`/api/clips/${fresh}`)).jointUncertaintyPx;
+    const usual = await spread();
+    const joints = { shoulder: { x: 900, y: 300 }, elbow: { x: 1090, y: 350 }, wrist: { x: 1200, y: 500 } };
+    const put = await coach.mutate('put', `/api/clips/${fresh}/marks/left/5`).send(joints);
+    const told = (put.body as SavedMark).jointUncertaintyPx;
+    expect(told.shoulder).toBeGreaterThan(usual.shoulder);
+    expect(await spread()).toEqual(told);
+    const { items } = await read<{ items: Mark[] }>(`/api/clips/${fresh}/marks`);
+    expect(items[0]?.uncertaintyDeg).toEqual((put.body as SavedMark).uncertaintyDeg);
+    // Sent once more it says the same.
+    const again = await coach.mutate('put', `/api/clips/${fresh}/marks/left/5`).send(joints);
+    expect(again.body).toEqual(put.body);
+  });
+
+  it('weighs what two coaches read against what placing the marks leaves open', async () => {
+    const admin = await club.agentFor('admin');
+    const round = await start(admin, 10);
+    const there = await marks();
+    for (const { position, arm, frame } of round.marks) {
+      const first = there.find((mark) => mark.arm === arm && mark.frame === frame);
+      if (!first) throw new Error('not marked');
+      const { shoulder, elbow, wrist } = first;
+      // The wrist alone, always the same way across the forearm: it turns by 20 px over its 180.
+      const [dx, dy] = [(wrist.x - elbow.x) / 180, (wrist.y - elbow.y) / 180];
+      const turned = { x: wrist.x + (20 + (position % 2)) * dy, y: wrist.y - (20 + (position % 2)) * dx };
+      await admin
+        .mutate('put', `/api/marking-rounds/${round.id}/marks/${position}`)
+        .send({ shoulder, elbow, wrist: turned });
+    }
+    await admin.mutate('post', `/api/marking-rounds/${round.id}/finish`);
+    const path = `/api/clips/${clipId}/marking-agreement`;
+    const [pair] = (await read<{ items: Agreements['items'] }>(path)).items;
+    const forearm = pair?.measures?.forearmDeg;
+    expect(Math.abs(forearm?.bias ?? 0)).toBeCloseTo(6.5, 0);
+    // Default spreads at the elbow and the wrist, 2 px each, of two people; the camera's lean is common to both.
+    expect(forearm?.marking).toBeCloseTo(((Math.SQRT2 * Math.hypot(2, 2)) / 180) * (180 / Math.PI), 1);
+    expect(forearm?.verdict).toBe('large');
+    expect(pair?.measures?.upperArmDeg).toMatchObject({ bias: 0, verdict: 'no-shift' });
   });
 
   it('is carried on at the next start where it was cut off in the middle', async () => {

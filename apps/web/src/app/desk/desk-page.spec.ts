@@ -171,7 +171,8 @@ describe('DeskPage', () => {
     await settle();
     expect(text('st-desk-bar .save')).toBe('Saving…');
     const mark = request.request.body as Pick<Mark, 'shoulder' | 'elbow' | 'wrist'>;
-    request.flush(saved({ arm: 'left', frame: 200, ...mark }));
+    const jointUncertaintyPx = testClip.jointUncertaintyPx;
+    request.flush({ ...saved({ arm: 'left', frame: 200, ...mark }), jointUncertaintyPx });
     await until(() => text('st-desk-bar .save') === 'All marks saved');
 
     press('z', { ctrlKey: true });

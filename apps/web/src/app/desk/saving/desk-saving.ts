@@ -73,7 +73,7 @@ export class DeskSaving {
     });
     this.desk = desk;
     if (!desk.canEdit) return desk;
-    const sender = new ChangeSender(this.api, clip.id);
+    const sender = new ChangeSender(this.api, clip.id, (spread) => desk.takeSpread(spread));
     this.sender = sender;
     const box = this.boxFor(`${user.id}:${clip.id}`, sender);
     box.knows(

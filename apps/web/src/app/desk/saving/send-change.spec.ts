@@ -1,7 +1,7 @@
 import { provideHttpClient } from '@angular/common/http';
 import { HttpTestingController, provideHttpClientTesting } from '@angular/common/http/testing';
 import { TestBed } from '@angular/core/testing';
-import type { Mark } from '@stillstroke/contract/marks';
+import type { SavedMark } from '@stillstroke/contract/marks';
 import type { Scale } from '@stillstroke/contract/scale';
 import { beforeEach, describe, expect, it } from 'vitest';
 import { Api } from '../../core/api/api';
@@ -24,7 +24,9 @@ const pending = (wanted: Wanted, base: number): PendingChange => ({
   tried: true,
 });
 
-const saved = (mark: typeof mine, version: number): Mark => ({
+const spread = { shoulder: 5, elbow: 4, wrist: 4 };
+
+const saved = (mark: typeof mine, version: number): SavedMark => ({
   arm: 'left',
   frame: 7,
   shoulder: mark.shoulder ?? { x: 0, y: 0 },
@@ -35,6 +37,7 @@ const saved = (mark: typeof mine, version: number): Mark => ({
   plumbAssumed: false,
   version,
   updatedAt: '2026-05-04T09:00:00.000Z',
+  jointUncertaintyPx: spread,
 });
 
 const problem = (status: number, code: string, current?: unknown) => ({
@@ -69,9 +72,22 @@ describe('ChangeSender', () => {
     expect(await result).toEqual({ kind: 'done', version: 4 });
   });
 
+  it('passes on with which spread the server reads the clip from then on', async () => {
+    const told: unknown[] = [];
+    sender = new ChangeSender(TestBed.inject(Api), testClip.id, (now) => told.push(now));
+    void sender.send(pending(wantedMark, 3));
+    http.expectOne(markUrl).flush(saved(mine, 4));
+    await vi.waitFor(() => expect(told).toEqual([spread]));
+    void sender.send(pending({ ...wantedMark, mark: null }, 4));
+    http.expectOne(`${markUrl}?version=4`).flush(null, { status: 204, statusText: 'No Content' });
+    (await nextRequest(http, `/api/clips/${testClip.id}`)).flush(testClip);
+    await vi.waitFor(() => expect(told).toEqual([spread, testClip.jointUncertaintyPx]));
+  });
+
   it('shows what somebody else made of it meanwhile', async () => {
     const result = sender.send(pending(wantedMark, 3));
-    const refusal = problem(409, 'changed-meanwhile', saved(theirs, 5));
+    const { jointUncertaintyPx: _, ...there } = saved(theirs, 5);
+    const refusal = problem(409, 'changed-meanwhile', there);
     http.expectOne(markUrl).flush(refusal, { status: 409, statusText: 'Conflict' });
     expect(await result).toMatchObject({
       kind: 'conflict',

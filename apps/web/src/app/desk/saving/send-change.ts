@@ -39,6 +39,8 @@ export class ChangeSender {
   constructor(
     private readonly api: Api,
     private readonly clipId: string,
+    /** Called with the spread that the clip's marks are read with, as often as the server says it. */
+    private readonly onSpread: (spread: Clip['jointUncertaintyPx']) => void = () => undefined,
   ) {}
 
   async send(change: PendingChange): Promise<SendResult> {
@@ -102,9 +104,12 @@ export class ChangeSender {
     if (isComplete(mark)) {
       const { shoulder, elbow, wrist } = mark;
       const body = { shoulder, elbow, wrist, version: base };
-      return (await answer(this.api.call(putMark, { params, body }))).version;
+      const saved = await answer(this.api.call(putMark, { params, body }));
+      this.onSpread(saved.jointUncertaintyPx);
+      return saved.version;
     }
     await answer(this.api.call(deleteMark, { params, query: base > 0 ? { version: base } : {} }));
+    this.askForSpread();
     return 0;
   }
 
@@ -115,6 +120,15 @@ export class ChangeSender {
     }
     await answer(this.api.call(deleteScale, { params, query: base > 0 ? { version: base } : {} }));
     return 0;
+  }
+
+  /** Without the mark that is gone another may have placed most of them. */
+  private askForSpread(): void {
+    this.api.call(getClip, { params: { id: this.clipId } }).subscribe({
+      next: ({ jointUncertaintyPx }) => this.onSpread(jointUncertaintyPx),
+      // The next mark that is saved says it as well.
+      error: () => undefined,
+    });
   }
 
   private async deliverStroke(id: string, stroke: DeskStroke | null, base: number): Promise<number> {

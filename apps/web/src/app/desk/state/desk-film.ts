@@ -19,6 +19,7 @@ export class DeskFilm {
   private readonly storedPlumb = signal<Plumb | null>(null);
   private readonly storedScale = signal<Scale | null>(null);
   private readonly storedFacts;
+  private readonly storedSpread;
   private readonly preview = signal<Preview | null>(null);
 
   /** By arm and frame (`left:168`), with the mark that is being dragged as it looks now. */
@@ -53,7 +54,13 @@ export class DeskFilm {
     const { view, travel, stroke, captureRateFactor, fieldOfView } = given;
     this.storedFacts = signal<ClipFacts>({ view, travel, stroke, captureRateFactor, fieldOfView });
     this.facts = this.storedFacts.asReadonly();
-    this.clip = computed<Clip>(() => ({ ...this.given, ...this.storedFacts(), plumb: this.plumb() }));
+    this.storedSpread = signal(given.jointUncertaintyPx, { equal: sameSpread });
+    this.clip = computed<Clip>(() => ({
+      ...this.given,
+      ...this.storedFacts(),
+      plumb: this.plumb(),
+      jointUncertaintyPx: this.storedSpread(),
+    }));
     this.storedPlumb.set(given.plumb);
     this.storedScale.set(scale);
     this.storedStrokes.set(inOrder(strokes));
@@ -71,6 +78,11 @@ export class DeskFilm {
 
   show(preview: Preview | null): void {
     this.preview.set(preview);
+  }
+
+  /** The spread that the server reads the clip's marks with from now on. */
+  takeSpread(spread: Clip['jointUncertaintyPx']): void {
+    this.storedSpread.set(spread);
   }
 
   apply(changes: readonly DeskChange[]): void {
@@ -102,6 +114,10 @@ export class DeskFilm {
         this.storedFacts.set(change.after);
     }
   }
+}
+
+function sameSpread(a: Clip['jointUncertaintyPx'], b: Clip['jointUncertaintyPx']): boolean {
+  return a.shoulder === b.shoulder && a.elbow === b.elbow && a.wrist === b.wrist;
 }
 
 function inOrder(strokes: readonly DeskStroke[]): readonly DeskStroke[] {

@@ -215,3 +215,31 @@ describe('DeskState: set-up', () => {
     expect(desk.clip()).toMatchObject({ captureRateFactor: 1, travel: 'right' });
   });
 });
+
+describe('DeskState: how far marks can be trusted', () => {
+  it('follows the spread that the server reads the clip with, values as they were', () => {
+    const desk = deskState();
+    const stroke = desk.strokes()[0];
+    if (!stroke?.catch) throw new Error('no stroke');
+    desk.chooseArm(stroke.arm);
+    desk.goTo(stroke.catch);
+    const read = () => {
+      const reading = desk.readingAtFrame()[stroke.arm];
+      const drop = desk.readings.measures().get(stroke.id)?.peakDrop;
+      if (!reading.ok || !drop?.ok) throw new Error('not read');
+      return {
+        angle: reading.value.angles.elbowDropDeg,
+        angleU: reading.value.uncertainty.elbowDropDeg,
+        drop: drop.value.value,
+        dropU: drop.value.uncertainty,
+      };
+    };
+    const before = read();
+    const { shoulder, elbow, wrist } = testClip.jointUncertaintyPx;
+    desk.takeSpread({ shoulder: 3 * shoulder, elbow: 3 * elbow, wrist: 3 * wrist });
+    const after = read();
+    expect([after.angle, after.drop]).toEqual([before.angle, before.drop]);
+    expect(after.angleU).toBeCloseTo(3 * before.angleU, 9);
+    expect(after.dropU).toBeGreaterThan(2 * before.dropU);
+  });
+});

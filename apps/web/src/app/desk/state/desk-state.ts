@@ -243,6 +243,11 @@ export class DeskState {
     this.film.apply(changes);
   }
 
+  /** Reads every mark with another spread, as the server does from now on. */
+  takeSpread(spread: Clip['jointUncertaintyPx']): void {
+    this.film.takeSpread(spread);
+  }
+
   /** Called with every change to save; answers how to stop. */
   onChange(listener: ChangeListener): () => void {
     return this.core.listen(listener);
