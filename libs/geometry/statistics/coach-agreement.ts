@@ -25,9 +25,6 @@ export interface CoachAgreement extends Agreement {
   readonly verdict: AgreementVerdict;
 }
 
-/** From fewer frames than this, limits are told with a warning that they are rough. */
-export const FRAMES_FOR_LIMITS = 10;
-
 /** Bland and Altman (1986) on angles: differences go the shorter way round. */
 export function coachAgreement(readings: readonly ReadByTwo[]): Outcome<CoachAgreement, AgreementReason> {
   const differences = readings.map(({ first, second }) => wrapDegrees(first - second));

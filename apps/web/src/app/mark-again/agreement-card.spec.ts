@@ -11,6 +11,8 @@ const measure = (bias: number, half: number): MeasureAgreement => ({
   limits: { low: bias - 3.92, high: bias + 3.92 },
   lowerLimitInterval: { low: bias - 6, high: bias - 2 },
   upperLimitInterval: { low: bias + 2, high: bias + 6 },
+  marking: 2,
+  verdict: Math.abs(bias) <= half ? 'no-shift' : Math.abs(bias) <= 2 ? 'small' : 'large',
   points: [
     { arm: 'left', frame: 40, mean: 10, difference: 1 },
     { arm: 'right', frame: 70, mean: 30, difference: 3 },
@@ -34,6 +36,16 @@ describe('the agreement of two coaches', () => {
       'Petra Lund reads the elbow 3.0° larger',
     );
     expect(sayAgreement(pair(null), 'forearmDeg')).toContain('too few to say');
+  });
+
+  it('weighs a steady difference against placing, and warns where limits are rough', () => {
+    const say = (bias: number) => sayAgreement(pair(measure(bias, 1)), 'forearmDeg');
+    expect(say(0.5)).not.toContain('placing');
+    expect(say(1.5)).toContain('which is small: placing the joints twice alone leaves ± 2.0°');
+    expect(say(3)).toContain('more than placing the joints twice leaves (± 2.0°)');
+    expect(say(3)).toContain('these limits are rough');
+    const many = { ...pair(measure(3, 1)), frames: 10 };
+    expect(sayAgreement(many, 'forearmDeg')).not.toContain('rough');
   });
 
   it('draws each frame with the way to it, between the limits', async () => {

@@ -41,6 +41,7 @@ export class AgreementCard {
           limits: range(found.limits),
           low: range(found.lowerLimitInterval),
           high: range(found.upperLimitInterval),
+          marking: degrees(found.marking),
         },
       ];
     }),

@@ -1,4 +1,9 @@
-import type { Agreements, MarkingFigures, MarkingRound } from '@stillstroke/contract/repeatability';
+import type {
+  Agreements,
+  MarkingFigures,
+  MarkingRound,
+  MeasureAgreement,
+} from '@stillstroke/contract/repeatability';
 import { fixed } from '../ui/figure/format-figure';
 
 type Figures = NonNullable<MarkingFigures['figures']>;
@@ -45,6 +50,9 @@ export function sayRound({ frames, marked, own, finishedAt }: MarkingRound): str
   return own === 0 ? `${far}; first marked by others` : `${far}; ${own} of them first marked by you`;
 }
 
+/** From fewer frames than this, limits are told with a warning. */
+const FRAMES_FOR_LIMITS = 10;
+
 /** Whether two coaches differ steadily in an angle, and how far single readings lie apart. */
 export function sayAgreement(pair: Pair, angle: AngleName): string {
   const found = pair.measures?.[angle];
@@ -59,5 +67,14 @@ export function sayAgreement(pair: Pair, angle: AngleName): string {
     biasInterval.low <= 0 && biasInterval.high >= 0
       ? `no steady difference can be told at the ${name} (${interval})`
       : `${bias > 0 ? pair.first.name : pair.second.name} reads the ${name} ${degrees(Math.abs(bias))} larger on average (${interval})`;
-  return `On ${sayFrames(pair.frames)} ${steady}. Of single readings 95 in 100 are expected to differ by ${degrees(limits.low)} to ${degrees(limits.high)}.`;
+  const rough = pair.frames < FRAMES_FOR_LIMITS ? ` From so few frames these limits are rough.` : '';
+  return `On ${sayFrames(pair.frames)} ${steady}${againstMarking[found.verdict](degrees(found.marking))}. Of single readings 95 in 100 are expected to differ by ${degrees(limits.low)} to ${degrees(limits.high)}.${rough}`;
 }
+
+/** A steady difference against what placing the same joints twice leaves open. */
+const againstMarking: Readonly<Record<MeasureAgreement['verdict'], (marking: string) => string>> = {
+  'no-shift': () => '',
+  small: (marking) => `, which is small: placing the joints twice alone leaves ± ${marking}`,
+  large: (marking) =>
+    `, more than placing the joints twice leaves (± ${marking}): agree on where they are before you compare`,
+};

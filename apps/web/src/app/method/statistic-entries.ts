@@ -256,6 +256,7 @@ export const statisticEntries = {
       'On every frame that both have marked, take the first coach’s angle less the second’s.',
       'Their mean is the steady difference, with a 95 % interval from Student’s t.',
       'The limits are the mean and 1.96 standard deviations to either side: 95 of 100 single differences are expected between them. Each limit has its own interval, with standard error √(3·SD²/n).',
+      'A steady difference is called small when it is no more than placing leaves: the root mean square over the frames of √(u₁² + u₂²), u each coach’s own, without the camera’s lean, which both readings share.',
     ],
     written: 'd̄ ± 1.96·SD',
     unit: 'degrees',
