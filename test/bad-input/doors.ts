@@ -28,9 +28,11 @@ import { verticalAt, verticalAtOf } from '@stillstroke/geometry/events/vertical-
 import { measuredByName } from '@stillstroke/geometry/measures/measured-by-name';
 import { strokeMeasures } from '@stillstroke/geometry/measures/stroke-measures';
 import type { Outcome } from '@stillstroke/geometry/outcome';
+import { angleAtCorner } from '@stillstroke/geometry/points/corner-angle';
 import { checkPoint, videoPoint } from '@stillstroke/geometry/points/video-point';
 import { agreement } from '@stillstroke/geometry/statistics/agreement';
 import { circularSummary } from '@stillstroke/geometry/statistics/circular';
+import { coachAgreement } from '@stillstroke/geometry/statistics/coach-agreement';
 import { compareArms } from '@stillstroke/geometry/statistics/compare-arms';
 import { compareWithin } from '@stillstroke/geometry/statistics/compare-within';
 import { hedgesG } from '@stillstroke/geometry/statistics/effect-size';
@@ -161,10 +163,21 @@ export const doors: readonly Door[] = [
   door('events/stroke.framesToMark', framesToMark, stroke, times, 800_000),
   door('events/stroke-rate.strokeRate', strokeRate, [stroke], times, { captureRateFactor: 0.5 }),
   door('events/vertical-at.verticalAt', verticalAt, stroke, marks, times, context),
+  door('points/corner-angle.angleAtCorner', angleAtCorner, mark.elbow, mark.shoulder, mark.wrist),
   door('points/video-point.checkPoint', checkPoint, mark.wrist),
   door('points/video-point.videoPoint', videoPoint, 3, 4),
   door('statistics/agreement.agreement', agreement, left, right),
   door('statistics/circular.circularSummary', circularSummary, [10, 350, 20], 360),
+  door(
+    'statistics/coach-agreement.coachAgreement',
+    coachAgreement,
+    left.map((first, at) => ({
+      first,
+      second: right[at] ?? first,
+      firstUncertainty: 1,
+      secondUncertainty: 2,
+    })),
+  ),
   door('statistics/compare-arms.compareArms', compareArms, left, right, {
     leftMarking: [1, 1, 1, 1],
     rightMarking: 1,

@@ -1,4 +1,4 @@
-import { type Outcome, ok } from '../outcome';
+import { type Outcome, ok, refused } from '../outcome';
 import { wrapDegrees } from '../units/angle';
 import { type Agreement, agreement, type AgreementReason } from './agreement';
 
@@ -35,6 +35,7 @@ export function coachAgreement(readings: readonly ReadByTwo[]): Outcome<CoachAgr
   if (!found.ok) return found;
   const variances = readings.map((each) => each.firstUncertainty ** 2 + each.secondUncertainty ** 2);
   const marking = Math.sqrt(variances.reduce((sum, each) => sum + each, 0) / variances.length);
+  if (!Number.isFinite(marking)) return refused('not-finite');
   const { bias, biasInterval } = found.value;
   const points = readings.map(({ second }, at) => {
     const difference = differences[at] ?? 0;
