@@ -6,6 +6,7 @@ import { count, eq } from 'drizzle-orm';
 import type { AppContext } from '../platform/context';
 import { HttpProblem, notFound } from '../platform/problem';
 import { questionsOf } from './review-answer';
+import { mailSaid } from './review-mails';
 import { findingInReach, questionInReach, type Reader } from './review-reach';
 
 type Context = Pick<AppContext, 'db' | 'now'>;
@@ -25,7 +26,7 @@ export function askQuestion(
   { id = randomUUID(), words }: Said,
 ): Question {
   // An athlete knows of sent reviews only.
-  const { finding } = findingInReach(db, user, findingId);
+  const { finding, review } = findingInReach(db, user, findingId);
   return db.transaction(
     (tx) => {
       const there = tx.select().from(findingMessages).where(eq(findingMessages.id, id)).get();
@@ -37,6 +38,7 @@ export function askQuestion(
       tx.insert(findingMessages)
         .values({ id, findingId: finding.id, words, authorId: user.id, createdAt: now().toISOString() })
         .run();
+      mailSaid(tx, 'question', { by: user, reviewId: review.id, now: now() }, review.authorId);
       return questionAnswer(tx, finding.id, id);
     },
     { behavior: 'immediate' },
@@ -50,7 +52,7 @@ export function answerQuestion(
   questionId: string,
   { id = randomUUID(), words }: Said,
 ): Question {
-  const { finding } = questionInReach(db, user, questionId);
+  const { finding, review, question } = questionInReach(db, user, questionId);
   return db.transaction(
     (tx) => {
       const there = tx.select().from(findingMessages).where(eq(findingMessages.id, id)).get();
@@ -69,6 +71,7 @@ export function answerQuestion(
           createdAt: now().toISOString(),
         })
         .run();
+      mailSaid(tx, 'answer', { by: user, reviewId: review.id, now: now() }, question.authorId);
       return questionAnswer(tx, finding.id, questionId);
     },
     { behavior: 'immediate' },

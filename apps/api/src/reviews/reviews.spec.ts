@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import type { ReadingSource } from '@stillstroke/contract/review-readings';
 import type { Finding, Question, Review, ReviewList } from '@stillstroke/contract/reviews';
+import { mails } from '@stillstroke/db/schema/mail';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { purgeDeleted } from '../media/purge';
 import { placeClip, placeSession } from '../media/test-films';
@@ -347,6 +348,28 @@ describe('reading', () => {
     const onAnswer = (answer.body as Question).answers[0]?.id ?? '';
     const nested = coach.mutate('post', `/api/questions/${onAnswer}/answers`).send({ words: 'x' });
     expect((await nested).status).toBe(404);
+  });
+
+  it('queues a mail with each step: to the athlete, to the coach, to who asked, and none twice', async () => {
+    const queued = () =>
+      club.context.db
+        .select({ kind: mails.kind, personId: mails.personId, data: mails.data })
+        .from(mails)
+        .all();
+    const { id, finding } = await ready();
+    expect(queued()).toEqual([]);
+    await send(id);
+    const sent = { id: randomUUID(), words: 'Is it the elbow?' };
+    for (let times = 0; times < 2; times += 1)
+      await athlete.mutate('post', `/api/findings/${finding.id}/questions`).send(sent);
+    await coach.mutate('post', `/api/questions/${sent.id}/answers`).send({ words: 'Yes.' });
+    const { users } = club.ids;
+    const page = `/reviews/${id}`;
+    expect(queued()).toEqual([
+      { kind: 'review-sent', personId: users.athlete, data: { page, from: 'The coach' } },
+      { kind: 'question', personId: users.coach, data: { page, from: 'The athlete' } },
+      { kind: 'answer', personId: users.athlete, data: { page, from: 'The coach' } },
+    ]);
   });
 
   it('lists reviews newest first, page by page, and of one session', async () => {

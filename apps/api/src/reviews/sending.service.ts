@@ -7,6 +7,7 @@ import type { AppContext } from '../platform/context';
 import { changedMeanwhile, HttpProblem } from '../platform/problem';
 import { LiveReadings, readSource } from './earlier-reading';
 import { reviewAnswer } from './review-answer';
+import { mailReviewSent } from './review-mails';
 import { reviewInReach, type ReviewRow } from './review-reach';
 import { draftOf } from './reviews.service';
 
@@ -41,6 +42,7 @@ export function sendReview(
         .set({ state: 'sent', sentAt, updatedAt: sentAt, authorId: user.id, version: draft.version + 1 })
         .where(eq(reviews.id, reviewId))
         .run();
+      mailReviewSent(tx, { by: user, reviewId, now: now() }, draft.athleteId);
       return reviewAnswer(tx, reviewId);
     },
     { behavior: 'immediate' },
