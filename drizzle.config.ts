@@ -13,6 +13,7 @@ export default defineConfig({
     './libs/db/schema/scale.ts',
     './libs/db/schema/view.ts',
     './libs/db/schema/mail.ts',
+    './libs/db/schema/timing.ts',
   ],
   out: './libs/db/migrations',
   casing: 'snake_case',

@@ -1,5 +1,5 @@
 import * as z from 'zod';
-import { idSchema, instantSchema } from './fields';
+import { frameSchema, idSchema, instantSchema } from './fields';
 
 export const viewSchema = z.enum([
   'side-underwater',
@@ -35,6 +35,29 @@ export type Point = z.infer<typeof pointSchema>;
 export const plumbSchema = z.strictObject({ top: pointSchema, bottom: pointSchema });
 export type Plumb = z.infer<typeof plumbSchema>;
 
+/** How far the swimmer travelled between two frames of the clip, e.g. from one marking of the lane to another. */
+export const knownDistanceSchema = z
+  .strictObject({
+    metres: z.number().finite().positive('A distance is more than 0 metres.').max(1000),
+    uncertaintyM: z
+      .number()
+      .finite()
+      .min(0, 'An uncertainty is 0 or more metres.')
+      .max(500)
+      .describe('Standard uncertainty of the metres'),
+    fromFrame: frameSchema,
+    toFrame: frameSchema,
+  })
+  .refine(({ metres, uncertaintyM }) => uncertaintyM < metres, {
+    path: ['uncertaintyM'],
+    message: 'The uncertainty has to be smaller than the distance itself.',
+  })
+  .refine(({ fromFrame, toFrame }) => fromFrame < toFrame, {
+    path: ['toFrame'],
+    message: 'The second frame has to come after the first.',
+  });
+export type KnownDistance = z.infer<typeof knownDistanceSchema>;
+
 export const clipStatusSchema = z.enum(['ready', 'converting', 'failed']);
 
 export const clipSchema = z.strictObject({
@@ -55,6 +78,7 @@ export const clipSchema = z.strictObject({
     .describe(
       'True: found by marking again, by whoever placed most of the marks; false: the default for the size',
     ),
+  distance: knownDistanceSchema.nullable(),
   status: clipStatusSchema,
   width: z.int().describe('Pixels as shown, after rotation and pixel aspect'),
   height: z.int(),

@@ -3,6 +3,7 @@ import {
   captureRateFactorSchema,
   clipSchema,
   fieldOfViewSchema,
+  knownDistanceSchema,
   plumbSchema,
   strokeKindSchema,
   travelSchema,
@@ -112,5 +113,16 @@ export const putCalibration = endpoint({
   summary: 'Set or take away the plumb of a clip',
   params: idParams,
   body: z.strictObject({ plumb: plumbSchema.nullable() }),
+  answer: clipSchema,
+});
+
+/** `distance: null` takes the distance away: stroke length and index then have no value. */
+export const putDistance = endpoint({
+  method: 'put',
+  path: '/api/clips/:id/distance',
+  access: ['admin', 'coach'],
+  summary: 'Set or take away how far the swimmer travelled between two frames',
+  params: idParams,
+  body: z.strictObject({ distance: knownDistanceSchema.nullable() }),
   answer: clipSchema,
 });

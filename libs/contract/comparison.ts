@@ -1,5 +1,6 @@
 import * as z from 'zod';
 import { viewSchema } from './clip-facts';
+import { coordinationSchema } from './coordination';
 import { endpoint, type AnswerOf } from './endpoint';
 import { uncertaintyPartSchema } from './explanation';
 import { frameSchema, idParams, idSchema } from './fields';
@@ -111,6 +112,12 @@ export const getComparison = endpoint({
       all: z.array(measureComparisonSchema),
       breathing: z.array(measureComparisonSchema),
       notBreathing: z.array(measureComparisonSchema),
+    }),
+    /** What both arms do together: no difference of arms, so it stands beside the measures. */
+    coordination: z.strictObject({
+      all: coordinationSchema,
+      breathing: coordinationSchema,
+      notBreathing: coordinationSchema,
     }),
     /** Breathing strokes against the others, on the same footing as left against right. */
     breath: z.strictObject({

@@ -32,6 +32,7 @@ const yesNo = column('yes-no');
 const day = column('date');
 const number = column('number');
 const pixels = column('number', 'pixels');
+const metres = column('number', 'metres');
 const degrees = column('number', 'degrees');
 const micros = column('whole', 'microseconds');
 const frame = column('whole', 'frame, 0-based');
@@ -39,10 +40,11 @@ const frame = column('whole', 'frame, 0-based');
 const clipId = code('clip_id', 'The clip; the same in every table');
 const strokeId = code('stroke_id', 'The stroke; the same in every table');
 const arm = code('arm', 'left or right');
+const armOrBoth = code('arm', 'left or right; both for the index of coordination, which is of both arms');
 const frameNumber = frame('frame', 'Index of the frame in presentation order');
 const timeUs = micros('time_us', 'Presentation time of that frame in the file');
 const measure = code('measure', 'Measure by its code name; see the columns of strokes.csv');
-const unit = code('unit', 'Unit of the numbers of this row: share (0–1), deg or per_min');
+const unit = code('unit', 'Unit of the numbers of this row: share (0–1), deg, per_min, m or m2_per_s');
 
 const about: Table = {
   file: 'about.csv',
@@ -89,6 +91,10 @@ const clips: Table = {
     pixels('plumb_top_y_px', 'As above'),
     pixels('plumb_bottom_x_px', 'Lower end of the plumb'),
     pixels('plumb_bottom_y_px', 'As above'),
+    metres('distance_m', 'How far the swimmer travelled between two frames; empty where nobody said'),
+    metres('distance_u_m', 'Its standard uncertainty'),
+    frame('distance_from_frame', 'The first of the two frames'),
+    frame('distance_to_frame', 'The second'),
     pixels('joint_u_shoulder_px', 'Standard uncertainty of a placed shoulder, each coordinate'),
     pixels('joint_u_elbow_px', 'The same of an elbow'),
     pixels('joint_u_wrist_px', 'The same of a wrist'),
@@ -140,6 +146,7 @@ const events: Table = {
     strokeId,
     arm,
     code('event', 'entry, catch, exit or next_entry'),
+    code('source', 'hand-seen, or wrist-proxy where the wrist stands in for a hand that cannot be seen'),
     frameNumber,
     timeUs,
     column('number', 'seconds')(
@@ -253,7 +260,7 @@ const trend: Table = {
     measure,
     unit,
     code('view', 'The camera view that is followed; others are not mixed in'),
-    arm,
+    armOrBoth,
     code('session_id', 'The session'),
     day('date', 'Its date'),
     number('mean', 'Mean of the strokes'),
@@ -269,7 +276,7 @@ const change: Table = {
     measure,
     unit,
     code('view', 'The camera view that is followed'),
-    arm,
+    armOrBoth,
     number('change', 'Last minus first session'),
     number('change_low', 'Lower end of its 95 % interval; empty below three strokes in either session'),
     number('change_high', 'Upper end'),

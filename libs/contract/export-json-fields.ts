@@ -48,6 +48,13 @@ export const jsonFields: readonly JsonField[] = [
   field(`${clip}.plumb.top.y`, 'As above'),
   field(`${clip}.plumb.bottom.x`, 'Lower end of the plumb, pixels'),
   field(`${clip}.plumb.bottom.y`, 'As above'),
+  field(
+    `${clip}.distance.metres`,
+    'How far the swimmer travelled between two frames; distance is null where nobody said',
+  ),
+  field(`${clip}.distance.uncertaintyM`, 'Its standard uncertainty, metres'),
+  field(`${clip}.distance.fromFrame`, 'The first of the two frames'),
+  field(`${clip}.distance.toFrame`, 'The second'),
   field(`${clip}.width`, 'Pixels as shown'),
   field(`${clip}.height`, 'Pixels as shown'),
   field(`${clip}.frameCount`, 'Number of frames'),
@@ -79,6 +86,9 @@ export const jsonFields: readonly JsonField[] = [
   field(`${stroke}.catch`, 'Frame of the catch'),
   field(`${stroke}.exit`, 'Frame of the exit'),
   field(`${stroke}.nextEntry`, 'Frame of the next entry of the same hand, or null'),
+  ...['entry', 'catch', 'exit', 'nextEntry'].map((event) =>
+    field(`${stroke}.${event}Source`, 'hand-seen, or wrist-proxy where the wrist stands in for the hand'),
+  ),
   field(`${stroke}.breath`, 'Whether the swimmer breathes in this stroke'),
   field(`${stroke}.figures.*.value`, `By measure: ${figureMeaning}; null where there is none`),
   field(`${stroke}.figures.*.uncertainty`, 'Standard uncertainty in the unit of the value'),
@@ -100,7 +110,7 @@ export const jsonFields: readonly JsonField[] = [
   field(`${mark}.plumbAssumed`, 'Whether the vertical of the picture stands in for a plumb'),
   field(`${row}.split`, 'all, breathing or not_breathing'),
   field(`${row}.measure`, 'Measure by its name'),
-  field(`${row}.unit`, 'share, deg or per_min'),
+  field(`${row}.unit`, 'share, deg, per_min, m or m2_per_s'),
   ...['left', 'right'].flatMap((side) => [
     field(`${row}.${side}.count`, `Strokes of the ${side} arm`),
     field(`${row}.${side}.mean`, 'Their mean'),
@@ -114,7 +124,7 @@ export const jsonFields: readonly JsonField[] = [
   field(`${row}.moreStrokes`, 'About how many more strokes a side would settle it, or null'),
   field(`${breath}.arm`, 'left, right, or together'),
   field(`${breath}.measure`, 'Measure by its name'),
-  field(`${breath}.unit`, 'share, deg or per_min'),
+  field(`${breath}.unit`, 'share, deg, per_min, m or m2_per_s'),
   ...['breathing', 'others'].flatMap((group) => [
     field(
       `${breath}.${group}.count`,
@@ -130,9 +140,9 @@ export const jsonFields: readonly JsonField[] = [
   field(`${breath}.verdict`, 'What can be said of it'),
   field(`${breath}.moreStrokes`, 'About how many more strokes would settle it, or null'),
   field('trend[].measure', 'Measure by its name; the trend is filled for an athlete'),
-  field('trend[].unit', 'share, deg or per_min'),
+  field('trend[].unit', 'share, deg, per_min, m or m2_per_s'),
   field('trend[].view', 'Camera view that is followed'),
-  field('trend[].arm', 'left or right'),
+  field('trend[].arm', 'left or right; both for the index of coordination'),
   field('trend[].points[].sessionId', 'The session'),
   field('trend[].points[].date', 'Its date'),
   field('trend[].points[].mean', 'Mean of its strokes'),

@@ -33,6 +33,14 @@ export const measureMeanings: Readonly<Record<Measure, MeasureMeaning>> = {
     unit: 'perMinute',
     meaning: 'Cycles a minute of world time, from entry to the next entry of the same hand',
   },
+  strokeLength: {
+    unit: 'm',
+    meaning: 'Metres in one cycle: mean speed over the known distance of the clip by the stroke rate',
+  },
+  strokeIndex: {
+    unit: 'm2PerS',
+    meaning: 'Speed times stroke length; to be compared within one stroke kind only',
+  },
 };
 
 /** How a unit ends a column's name, and how it is said. */
@@ -40,4 +48,6 @@ export const unitNames: Readonly<Record<Unit, { readonly suffix: string; readonl
   share: { suffix: 'share', words: 'share, 0–1' },
   deg: { suffix: 'deg', words: 'degrees' },
   perMinute: { suffix: 'per_min', words: 'a minute' },
+  m: { suffix: 'm', words: 'metres' },
+  m2PerS: { suffix: 'm2_per_s', words: 'square metres a second' },
 };

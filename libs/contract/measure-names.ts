@@ -11,6 +11,8 @@ export const measureNames: Readonly<Record<Measure, string>> = {
   push: 'Push',
   recovery: 'Recovery',
   strokeRate: 'Stroke rate',
+  strokeLength: 'Stroke length',
+  strokeIndex: 'Stroke index',
 };
 
 /** The name of each angle that a mark gives. */

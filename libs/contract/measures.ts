@@ -1,11 +1,12 @@
 import * as z from 'zod';
+import { coordinationSchema } from './coordination';
 import { endpoint } from './endpoint';
 import { frameSchema, idParams, idSchema } from './fields';
 import { scalePlaneSchema } from './scale';
 import { armSchema } from './strokes';
 import { viewCautionSchema } from './view-cautions';
 
-/** Every measure that Compare and Trend know. Shares are 0–1, angles degrees, rates cycles per minute. */
+/** Every measure that Compare and Trend know. Shares are 0–1, angles degrees, rates cycles per minute, lengths metres, stroke index m²/s. */
 export const measureSchema = z.enum([
   'verticalAt',
   'peakDrop',
@@ -15,9 +16,12 @@ export const measureSchema = z.enum([
   'push',
   'recovery',
   'strokeRate',
+  'strokeLength',
+  'strokeIndex',
 ]);
 export type Measure = z.infer<typeof measureSchema>;
-export const unitSchema = z.enum(['share', 'deg', 'perMinute']);
+export const unitSchema = z.enum(['share', 'deg', 'perMinute', 'm', 'm2PerS']);
+export type Unit = z.infer<typeof unitSchema>;
 
 /** A computed figure, or the reason why there is none (`value` null). `frame` is where to look at it on the Desk. */
 export const figureSchema = z.strictObject({
@@ -58,6 +62,8 @@ export const strokeMeasuresSchema = z.strictObject({
   elbowAtMidPull: figureSchema,
   midPull: figureSchema.describe('Value: share of catch→exit; frame: the computed event'),
   strokeRate: figureSchema,
+  strokeLength: figureSchema.describe('Metres per cycle; needs a known distance'),
+  strokeIndex: figureSchema.describe('Speed × length, m²/s'),
   forearmCurve: z.array(curvePointSchema),
   dropCurve: z.array(curvePointSchema),
   cautions: z.array(viewCautionSchema).describe('What of the view these measures have to be read with'),
@@ -78,6 +84,7 @@ export const getMeasures = endpoint({
   answer: z.strictObject({
     items: z.array(strokeMeasuresSchema),
     nextCursor: z.null(),
+    coordination: coordinationSchema,
     plumbAssumed: z.boolean(),
     cautions: z.array(viewCautionSchema).describe('What holds for the whole clip'),
     scalePlane: scalePlaneSchema.nullable(),

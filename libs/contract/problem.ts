@@ -20,6 +20,7 @@ export const problemCodes = [
   'frame-out-of-range',
   'strokes-overlap',
   'plumb-too-short',
+  'distance-unusable',
   'joints-coincide',
   'scale-unusable',
   'clip-not-ready',

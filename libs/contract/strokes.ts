@@ -5,6 +5,10 @@ import { frameSchema, idParams, idSchema } from './fields';
 export const armSchema = z.enum(['left', 'right']);
 export type Arm = z.infer<typeof armSchema>;
 
+/** What an event was chosen by: the hand itself, or the wrist that stands in for it where the hand cannot be seen. */
+export const eventSourceSchema = z.enum(['hand-seen', 'wrist-proxy']);
+export type EventSource = z.infer<typeof eventSourceSchema>;
+
 /** One arm's cycle by its events (frames): entry < catch < exit < next entry; mid-pull is computed, never stored. */
 export const strokeSchema = z.strictObject({
   id: idSchema,
@@ -15,10 +19,22 @@ export const strokeSchema = z.strictObject({
   exit: frameSchema,
   nextEntry: frameSchema.nullable(),
   breath: z.boolean(),
+  entrySource: eventSourceSchema,
+  catchSource: eventSourceSchema,
+  exitSource: eventSourceSchema,
+  /** Means something only where there is a next entry. */
+  nextEntrySource: eventSourceSchema,
   /** Counts changes; send it back as `version` so that nobody's change is overwritten unseen. */
   version: z.int(),
 });
 export type Stroke = z.infer<typeof strokeSchema>;
+
+const eventSourceFields = {
+  entrySource: eventSourceSchema.optional(),
+  catchSource: eventSourceSchema.optional(),
+  exitSource: eventSourceSchema.optional(),
+  nextEntrySource: eventSourceSchema.optional(),
+};
 
 const strokeFields = {
   arm: armSchema,
@@ -27,6 +43,8 @@ const strokeFields = {
   exit: frameSchema,
   nextEntry: frameSchema.nullable().optional(),
   breath: z.boolean(),
+  /** Left out: the hand was seen. */
+  ...eventSourceFields,
 };
 
 export const listStrokes = endpoint({
@@ -54,7 +72,8 @@ export const updateStroke = endpoint({
   method: 'patch',
   path: '/api/strokes/:id',
   access: ['admin', 'coach'],
-  summary: 'Change events or breath; with `version`, refused as changed-meanwhile when it is not the newest',
+  summary:
+    'Change events, what they were chosen by, or breath; with `version`, refused as changed-meanwhile when it is not the newest',
   params: idParams,
   body: z
     .strictObject({
@@ -63,6 +82,7 @@ export const updateStroke = endpoint({
       exit: frameSchema.optional(),
       nextEntry: frameSchema.nullable().optional(),
       breath: z.boolean().optional(),
+      ...eventSourceFields,
       version: z.int().optional(),
     })
     .refine(

@@ -19,11 +19,17 @@ export const changeVerdictSchema = z.enum([
 ]);
 export type ChangeVerdict = z.infer<typeof changeVerdictSchema>;
 
+/** What can be followed over the sessions: every measure of a stroke, and the index of coordination of both arms. */
+export const trendMeasureSchema = z.enum([...measureSchema.options, 'coordination']);
+export type TrendMeasure = z.infer<typeof trendMeasureSchema>;
+/** `both`: a measure of both arms together has one line. */
+export const trendArmSchema = z.enum([...armSchema.options, 'both']);
+
 /** One arm in one session: the mean of its strokes, its standard uncertainty, and where to look. */
 export const trendPointSchema = z.strictObject({
   sessionId: idSchema,
   date: dateSchema,
-  arm: armSchema,
+  arm: trendArmSchema,
   mean: z.number(),
   uncertainty: z.number(),
   count: z.int(),
@@ -38,7 +44,7 @@ export const trendPointSchema = z.strictObject({
 export type TrendPoint = z.infer<typeof trendPointSchema>;
 
 export const armTrendSchema = z.strictObject({
-  arm: armSchema,
+  arm: trendArmSchema,
   points: z.array(trendPointSchema),
   /** Last minus first session. */
   change: z.number().nullable(),
@@ -79,14 +85,16 @@ export const getTrend = endpoint({
   params: idParams,
   /** Without `view` the one under water where there is one. Only one view and stroke kind at a time: they are never mixed. */
   query: z.strictObject({
-    measure: measureSchema.default('verticalAt'),
+    measure: trendMeasureSchema.default('verticalAt'),
     view: sideViewSchema.optional(),
     stroke: strokeKindSchema.default('full'),
   }),
   answer: z.strictObject({
     athleteId: idSchema,
-    measure: measureSchema,
+    measure: trendMeasureSchema,
     unit: unitSchema,
+    /** Measures of which some session of the athlete has figures. */
+    measured: z.array(trendMeasureSchema),
     view: sideViewSchema,
     stroke: strokeKindSchema,
     /** Every view and stroke kind with this measure, with the number of its sessions: what can be chosen. */

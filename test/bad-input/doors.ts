@@ -22,6 +22,7 @@ import { peakDrop, peakDropOf } from '@stillstroke/geometry/events/peak-drop';
 import { strokePhases } from '@stillstroke/geometry/events/phases';
 import { pullMarks } from '@stillstroke/geometry/events/pull-marks';
 import { checkOrder, framesToMark, pullSpan } from '@stillstroke/geometry/events/stroke';
+import { checkKnownDistance, swimSpeed } from '@stillstroke/geometry/events/known-distance';
 import { strokeLength } from '@stillstroke/geometry/events/stroke-length';
 import { strokeRate } from '@stillstroke/geometry/events/stroke-rate';
 import { verticalAt, verticalAtOf } from '@stillstroke/geometry/events/vertical-at';
@@ -128,6 +129,8 @@ const placedTwice = [0, 1, 2].map(() => ({
 }));
 const twice = [mark, armOf({ upperArmDeg: 61, forearmDeg: 21 })];
 
+const swum = { metres: 10, uncertaintyM: 0.05, fromFrame: 2, toFrame: 40 };
+
 /** Where people's input comes in: each is tried with everything that can be wrong with it. */
 export const doors: readonly Door[] = [
   door('angles/arm-angles.armAngles', armAngles, mark, { travel: 'right', plumb }),
@@ -222,11 +225,8 @@ export const doors: readonly Door[] = [
   door('units/share.share', share, 0.3),
   door('view/port-bending.edgeRadius', edgeRadius, fieldOfView),
   door('view/port-bending.portBending', portBending, mark.wrist, picture, fieldOfView),
-  door('events/stroke-length.strokeLength', strokeLength, {
-    cyclesPerSecond: { value: 0.8, uncertainty: 0.01 },
-    distanceM: { value: 10, uncertainty: 0.05 },
-    durationS: { value: 7, uncertainty: 0.02 },
-  }),
+  door('events/known-distance.checkKnownDistance', checkKnownDistance, swum, 100),
+  door('events/known-distance.swimSpeed', swimSpeed, swum, times, { captureRateFactor: 0.5 }),
 ];
 
 /** Further in, where only what a door has let through arrives: tried with that, and what they answer has no NaN either. */
@@ -268,7 +268,13 @@ export const inner: readonly Door[] = [
   door('events/mid-pull.midPullOf', midPullOf, pull, times),
   door('events/peak-drop.peakDropOf', peakDropOf, pull),
   door('events/vertical-at.verticalAtOf', verticalAtOf, pull, times, context),
-  door('measures/measured-by-name.measuredByName', measuredByName, 'strokeRate', stroke, measures, times),
+  door('measures/measured-by-name.measuredByName', measuredByName, 'strokeRate', measures),
+  door(
+    'events/stroke-length.strokeLength',
+    strokeLength,
+    valueOf(swimSpeed(swum, times)),
+    valueOf(strokeRate([stroke], times)),
+  ),
   door('statistics/welch.welchOf', welchOf, valueOf(summarise(left)), valueOf(summarise(right))),
   door('trend/change.sessionChange', sessionChange, sessionOf(left), sessionOf(right)),
 ];

@@ -1,7 +1,17 @@
+import { swimSpeed } from '@stillstroke/geometry/events/known-distance';
 import { strokeLength } from '@stillstroke/geometry/events/stroke-length';
 import { strokeRate } from '@stillstroke/geometry/events/stroke-rate';
 import { valueOf } from '@stillstroke/geometry/testing/arms';
 import { describe, expect, it } from 'vitest';
+
+/** Exact speed in m/s and rate in cycles a minute. */
+const swimAt = (metresPerSecond: number, cyclesPerMinute: number) =>
+  valueOf(
+    strokeLength(
+      { metresPerSecond, parts: [], frames: [0, 1] },
+      { cyclesPerMinute, parts: [], frames: [0, 1] },
+    ),
+  );
 
 /**
  * Craig AB Jr, Pendergast DR (1979). Relationships of stroke rate, distance per stroke, and velocity in competitive
@@ -16,14 +26,7 @@ describe('rate, length, speed, index', () => {
     [1.98, 54, 2.2, 4.356],
     [1.0, 30, 2.0, 2.0],
   ])('%f m/s at %f cycles a minute [CALC]', (speed, rate, length, index) => {
-    const swim = valueOf(
-      strokeLength({
-        cyclesPerSecond: { value: rate / 60, uncertainty: 0 },
-        distanceM: { value: 10 * speed, uncertainty: 0 },
-        durationS: { value: 10, uncertainty: 0 },
-      }),
-    );
-    expect(swim.speed.value).toBeCloseTo(speed, 9);
+    const swim = swimAt(speed, rate);
     expect(swim.length.value).toBeCloseTo(length, 6);
     expect(swim.index.value).toBeCloseTo(index, 6);
   });
@@ -35,20 +38,19 @@ describe('rate, length, speed, index', () => {
     expect(rate.durationS).toBeCloseTo(4.2, 12);
     expect(rate.cyclesPerMinute).toBeCloseTo(42.857143, 6);
     expect(rate.uncertainty).toBeCloseTo(0.083316, 6);
-    const swim = valueOf(
-      strokeLength({
-        cyclesPerSecond: { value: rate.cyclesPerMinute / 60, uncertainty: rate.uncertainty / 60 },
-        distanceM: { value: 10, uncertainty: 0.05 },
-        durationS: { value: 6.8, uncertainty: (Math.SQRT2 * 0.02) / Math.sqrt(12) },
-      }),
-    );
-    expect(swim.speed.value).toBeCloseTo(1.470588, 6);
+    // 10 m in 6.80 s: frames 10 and 350.
+    const distance = { metres: 10, uncertaintyM: 0.05, fromFrame: 10, toFrame: 350 };
+    const speed = valueOf(swimSpeed(distance, times, { eventErrorFrames: 0.5 }));
+    const swim = valueOf(strokeLength(speed, rate));
+    expect(speed.metresPerSecond).toBeCloseTo(1.470588, 6);
     expect(swim.length.value).toBeCloseTo(2.058824, 6);
     expect(swim.index.value).toBeCloseTo(3.027682, 6);
-    // First-order slopes by small differences: the last printed digit may be off by one.
-    expect(swim.speed.uncertainty).toBeCloseTo(0.007562, 5);
+    expect(speed.standard).toBeCloseTo(0.007562, 6);
+    // The rate's slopes are small differences: the last printed digit may be off by one.
     expect(swim.length.uncertainty).toBeCloseTo(0.011318, 5);
     expect(swim.index.uncertainty).toBeCloseTo(0.031689, 5);
+    expect(speed.parts.map(({ source }) => source)).toEqual(['distance', 'time']);
+    expect(swim.index.parts.map(({ source }) => source).slice(0, 2)).toEqual(['distance', 'time']);
   });
 
   it('slow motion: the capture rate factor makes rates those of the world', () => {
@@ -63,18 +65,10 @@ describe('rate, length, speed, index', () => {
 describe('the product of means is not the mean index', () => {
   it('0.98 × 1.5 is not the printed 1.67 [SEEN abstract]', () => {
     expect(0.98 * 1.5).toBeCloseTo(1.47, 9);
-    const index = (speed: number, rate: number) =>
-      valueOf(
-        strokeLength({
-          cyclesPerSecond: { value: rate, uncertainty: 0 },
-          distanceM: { value: speed, uncertainty: 0 },
-          durationS: { value: 1, uncertainty: 0 },
-        }),
-      );
-    const [slow, fast] = [index(0.8, 0.9), index(1.2, 0.5)];
+    const swims = [swimAt(0.8, 54), swimAt(1.2, 30)] as const;
+    const [slow, fast] = swims;
     const meanIndex = (slow.index.value + fast.index.value) / 2;
-    const product =
-      ((slow.speed.value + fast.speed.value) / 2) * ((slow.length.value + fast.length.value) / 2);
+    const product = ((0.8 + 1.2) / 2) * ((slow.length.value + fast.length.value) / 2);
     expect(Math.abs(meanIndex - product)).toBeGreaterThan(0.1);
   });
 });

@@ -355,6 +355,12 @@ export const routes: readonly RouteRow[] = [
   },
   { route: 'get /api/clips/:id/frames', path: (things) => `${clip(things)}/frames`, statuses: read },
   {
+    route: 'put /api/clips/:id/distance',
+    path: (things) => `${clip(things)}/distance`,
+    body: () => ({ distance: { metres: 5, uncertaintyM: 0.05, fromFrame: 10, toFrame: 100 } }),
+    statuses: change(200),
+  },
+  {
     route: 'put /api/clips/:id/calibration',
     path: (things) => `${clip(things)}/calibration`,
     body: () => ({ plumb: { top: { x: 100, y: 50 }, bottom: { x: 104, y: 650 } } }),

@@ -6,6 +6,7 @@ import * as review from './review';
 import * as scale from './scale';
 import * as signIn from './sign-in';
 import * as targets from './targets';
+import * as timing from './timing';
 import * as view from './view';
 
 /** Every table, for the ORM's typed queries and for the migration generator. */
@@ -17,6 +18,7 @@ export const schema = {
   ...review,
   ...targets,
   ...scale,
+  ...timing,
   ...view,
   ...mail,
 };

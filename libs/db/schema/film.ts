@@ -106,6 +106,11 @@ export const clipFrames = sqliteTable('clip_frames', {
   keyFrames: blob({ mode: 'buffer' }).notNull(),
 });
 
+const eventSource = () =>
+  text({ enum: ['hand-seen', 'wrist-proxy'] })
+    .notNull()
+    .default('hand-seen');
+
 export const strokes = sqliteTable(
   'strokes',
   {
@@ -119,6 +124,11 @@ export const strokes = sqliteTable(
     exitFrame: integer().notNull(),
     nextEntryFrame: integer(),
     breath: integer({ mode: 'boolean' }).notNull(),
+    /** Whether the hand was seen on the event's frame or the wrist stands in for it. */
+    entrySource: eventSource(),
+    catchSource: eventSource(),
+    exitSource: eventSource(),
+    nextEntrySource: eventSource(),
     version: integer().notNull().default(1),
     updatedAt: text().notNull(),
     updatedBy: text(),
@@ -168,6 +178,8 @@ export const strokeFigures = sqliteTable(
         'push',
         'recovery',
         'strokeRate',
+        'strokeLength',
+        'strokeIndex',
       ],
     }).notNull(),
     /** In the unit of the measure. */

@@ -3,104 +3,143 @@ import { type Outcome, ok, refused } from '../outcome';
 import { Z95 } from '../statistics/normal';
 import { meanOf } from '../statistics/sample';
 import { type Interval, normalInterval } from '../uncertainty/elbow-interval';
-import type { UncertaintyPart } from '../uncertainty/parts';
-import { combine } from '../uncertainty/parts';
-import { propagate, type UncertainInput } from '../uncertainty/propagate';
-import { eventTimeUncertaintyUs, type FrameTimesUs } from './frame-times';
+import { combine, type UncertaintyPart } from '../uncertainty/parts';
+import { eventInput, type EventOptions } from './event-moment';
+import type { FrameTimesUs } from './frame-times';
 import { checkOrder, type OrderReason, type StrokeEvents } from './stroke';
 
 /** Catch-up: a gap between the arms' propulsion; superposition: an overlap; undetermined: neither can be told. */
 export type CoordinationMode = 'catch-up' | 'opposition' | 'superposition' | 'undetermined';
 
 /** One passage from an arm to the other and back. */
-export interface CoordinationCycle {
+export interface CoordinationCycle<T extends StrokeEvents = StrokeEvents> {
   /** Percent of the cycle: from the other arm's catch to this arm's exit, + overlap. */
   readonly lag1: number;
   /** Percent: from this arm's next catch to the other arm's exit, + overlap. */
   readonly lag2: number;
   /** Mean of the two. */
   readonly index: number;
+  /** Standard uncertainty from choosing the four event frames. */
   readonly uncertainty: number;
+  readonly parts: readonly UncertaintyPart[];
   /** Exit, other's catch, other's exit, next catch. */
   readonly frames: readonly [number, number, number, number];
+  /** The stroke that begins, the other arm's, and the next of the first arm. */
+  readonly strokes: readonly [T, T, T];
 }
 
-/** Index of coordination (Chollet, Chalies and Chatard 2000), percent of the mean cycle. */
-export interface Coordination {
+/** The mean of some passages, with its mode. */
+export interface CoordinationSummary {
+  /** Percent of the mean cycle; − gap, + overlap. */
   readonly index: number;
   /** Standard uncertainty from choosing the event frames, of the mean over the cycles. */
   readonly uncertainty: number;
   readonly interval: Interval;
-  readonly parts: readonly UncertaintyPart[];
   readonly mode: CoordinationMode;
-  /** The arm that begins. */
+}
+
+/** Index of coordination (Chollet, Chalies and Chatard 2000), percent of the mean cycle. */
+export interface Coordination<T extends StrokeEvents = StrokeEvents> extends CoordinationSummary {
+  readonly parts: readonly UncertaintyPart[];
+  /** The arm that begins the first passage. */
   readonly from: ArmSide;
-  readonly cycles: readonly CoordinationCycle[];
+  readonly cycles: readonly CoordinationCycle<T>[];
 }
 
 export type CoordinationReason =
   OrderReason | 'too-few-strokes' | 'arms-do-not-alternate' | 'no-complete-cycle';
 
-export interface CoordinationOptions {
-  /** See `EVENT_ERROR_FRAMES`. */
-  readonly eventErrorFrames?: number;
-}
-
 /**
- * Index of coordination over all passages arm – other arm – arm. For one passage with exit₁, catch′, exit′, catch₂ and
- * the mean cycle T: ½[(exit₁ − catch′) + (exit′ − catch₂)]/T. A share: the capture rate does not matter.
+ * Index of coordination over all passages arm – other arm – arm, along the clip and without an event in two of them. For
+ * one passage with exit₁, catch′, exit′, catch₂ and the mean cycle T: ½[(exit₁ − catch′) + (exit′ − catch₂)]/T. A share,
+ * so the capture rate matters only to the uncertainty of events chosen by the wrist.
  */
-export function indexOfCoordination(
-  arms: Readonly<Record<ArmSide, readonly StrokeEvents[]>>,
+export function indexOfCoordination<T extends StrokeEvents>(
+  arms: Readonly<Record<ArmSide, readonly T[]>>,
   times: FrameTimesUs,
-  options: CoordinationOptions = {},
-): Outcome<Coordination, CoordinationReason> {
-  for (const stroke of [...arms.left, ...arms.right]) {
+  options: EventOptions = {},
+): Outcome<Coordination<T>, CoordinationReason> {
+  const placed = (['left', 'right'] as const).flatMap((arm) => arms[arm].map((stroke) => ({ arm, stroke })));
+  for (const { stroke } of placed) {
     const order = checkOrder(stroke, times.length);
     if (!order.ok) return order;
   }
-  const left = byEntry(arms.left);
-  const right = byEntry(arms.right);
-  const [firstLeft, firstRight] = [left[0], right[0]];
-  if (!firstLeft || !firstRight) return refused('too-few-strokes');
-  const from: ArmSide = firstLeft.entry < firstRight.entry ? 'left' : 'right';
-  const passages = from === 'left' ? passagesOf(left, right) : passagesOf(right, left);
-  if (passages.length === 0)
-    return refused(left.length + right.length < 3 ? 'too-few-strokes' : 'arms-do-not-alternate');
-  const cycleUs = meanCycle(arms, passages, times);
+  if (arms.left.length === 0 || arms.right.length === 0 || placed.length < 3)
+    return refused('too-few-strokes');
+  const passages = passagesAlong(placed.sort((a, b) => a.stroke.entry - b.stroke.entry));
+  const [first] = passages;
+  if (!first) return refused('arms-do-not-alternate');
+  const cycleUs = meanCycle(
+    placed.map(({ stroke }) => stroke),
+    passages,
+    times,
+  );
   if (!(cycleUs > 0)) return refused('no-complete-cycle');
-  return ok(summary(from, passages, cycleUs, times, options));
+  const cycles = passages.map((passage) => cycleOf(passage, cycleUs, times, options));
+  const { parts } = combine(
+    cycles.flatMap((cycle) =>
+      cycle.parts.map(({ source, alone }) => ({ source, alone: alone / cycles.length })),
+    ),
+  );
+  return ok({ ...summariseCoordination(cycles), parts, from: first.arm, cycles });
 }
 
-function byEntry(strokes: readonly StrokeEvents[]): StrokeEvents[] {
-  return [...strokes].sort((a, b) => a.entry - b.entry);
+/** Mean of one or more passages, and the mode that it and its uncertainty allow. Passages share no event. */
+export function summariseCoordination(
+  cycles: readonly Pick<CoordinationCycle, 'index' | 'uncertainty'>[],
+): CoordinationSummary {
+  const index = meanOf(cycles.map((cycle) => cycle.index));
+  const uncertainty = Math.hypot(...cycles.map((cycle) => cycle.uncertainty)) / cycles.length;
+  return {
+    index,
+    uncertainty,
+    interval: normalInterval(index, uncertainty),
+    mode: modeOf(index, uncertainty),
+  };
 }
 
-interface Passage {
-  readonly first: StrokeEvents;
-  readonly other: StrokeEvents;
-  readonly second: StrokeEvents;
+interface Placed<T> {
+  readonly arm: ArmSide;
+  readonly stroke: T;
 }
 
-/** Each pair of strokes of one arm that follow each other with exactly one stroke of the other arm entering between. */
-function passagesOf(one: readonly StrokeEvents[], other: readonly StrokeEvents[]): Passage[] {
-  return one.flatMap((first, i) => {
-    const second = one[i + 1];
-    if (!second || (first.nextEntry !== null && first.nextEntry !== second.entry)) return [];
-    const between = other.filter(({ entry }) => entry > first.entry && entry < second.entry);
-    const [only] = between;
-    return only && between.length === 1 ? [{ first, other: only, second }] : [];
-  });
+interface Passage<T> {
+  readonly arm: ArmSide;
+  readonly first: T;
+  readonly other: T;
+  readonly second: T;
+}
+
+/**
+ * Goes along the strokes by entry: three in a row of alternating arms are a passage when the third is the one that the
+ * first is known to lead to (or nothing else is known), and the next passage may begin with its last stroke.
+ */
+function passagesAlong<T extends StrokeEvents>(placed: readonly Placed<T>[]): Passage<T>[] {
+  const passages: Passage<T>[] = [];
+  let at = 0;
+  while (at + 2 < placed.length) {
+    const [first, other, second] = placed.slice(at, at + 3);
+    if (!first || !other || !second) break;
+    const { nextEntry } = first.stroke;
+    const alternate = first.arm === second.arm && other.arm !== first.arm;
+    const follows = nextEntry === null || nextEntry === second.stroke.entry;
+    const fits = alternate && follows;
+    if (fits) {
+      passages.push({ arm: first.arm, first: first.stroke, other: other.stroke, second: second.stroke });
+    }
+    at += fits ? 2 : 1;
+  }
+  return passages;
 }
 
 /** Mean duration of the cycles that are complete, by a next entry or by the next stroke's entry. */
-function meanCycle(
-  arms: Readonly<Record<ArmSide, readonly StrokeEvents[]>>,
-  passages: readonly Passage[],
+function meanCycle<T extends StrokeEvents>(
+  strokes: readonly T[],
+  passages: readonly Passage<T>[],
   times: FrameTimesUs,
 ): number {
   const lasting = (from: number, to: number): number => (times[to] ?? NaN) - (times[from] ?? NaN);
-  const known = [...arms.left, ...arms.right].flatMap(({ entry, nextEntry }) =>
+  const known = strokes.flatMap(({ entry, nextEntry }) =>
     nextEntry === null ? [] : [lasting(entry, nextEntry)],
   );
   const followed = passages.flatMap(({ first, second }) =>
@@ -109,45 +148,32 @@ function meanCycle(
   return meanOf([...known, ...followed]);
 }
 
-function summary(
-  from: ArmSide,
-  passages: readonly Passage[],
+function cycleOf<T extends StrokeEvents>(
+  { first, other, second }: Passage<T>,
   cycleUs: number,
   times: FrameTimesUs,
-  options: CoordinationOptions,
-): Coordination {
-  const read = passages.map((passage) => {
-    const { first, other, second } = passage;
-    const frames = [first.exit, other.catch, other.exit, second.catch] as const;
-    const sources = ['exit-frame', 'catch-frame', 'exit-frame', 'catch-frame'] as const;
-    const inputs = frames.map((frame, i): UncertainInput => ({
-      source: sources[i] ?? 'exit-frame',
-      value: times[frame] ?? NaN,
-      standard: eventTimeUncertaintyUs(times, frame, options.eventErrorFrames),
-    }));
-    const percent = (us: number): number => (100 * us) / cycleUs;
-    const index = ([exit1 = 0, catch1 = 0, exit2 = 0, catch2 = 0]: readonly number[]): number =>
-      percent(exit1 - catch1 + exit2 - catch2) / 2;
-    const [exit1 = 0, catch1 = 0, exit2 = 0, catch2 = 0] = inputs.map(({ value }) => value);
-    const u = propagate(inputs, index);
-    const lags = { lag1: percent(exit1 - catch1), lag2: percent(exit2 - catch2) };
-    return {
-      u,
-      cycle: { ...lags, index: index([exit1, catch1, exit2, catch2]), uncertainty: u.standard, frames },
-    };
-  });
-  const index = meanOf(read.map(({ cycle }) => cycle.index));
-  const u = combine(
-    read.flatMap(({ u }) => u.parts.map(({ source, alone }) => ({ source, alone: alone / read.length }))),
-  );
+  options: EventOptions,
+): CoordinationCycle<T> {
+  const events = [
+    eventInput(first, 'exit', times, options),
+    eventInput(other, 'catch', times, options),
+    eventInput(other, 'exit', times, options),
+    eventInput(second, 'catch', times, options),
+  ] as const;
+  const percent = (us: number): number => (100 * us) / cycleUs;
+  const [exit1, catch1, exit2, catch2] = events;
+  const lag1 = percent(exit1.value - catch1.value);
+  const lag2 = percent(exit2.value - catch2.value);
+  // Each event moves one of two lags that are averaged: slope ½ over the cycle.
+  const u = combine(events.map(({ source, standard }) => ({ source, alone: percent(standard) / 2 })));
   return {
-    index,
+    lag1,
+    lag2,
+    index: (lag1 + lag2) / 2,
     uncertainty: u.standard,
-    interval: normalInterval(index, u.standard),
     parts: u.parts,
-    mode: modeOf(index, u.standard),
-    from,
-    cycles: read.map(({ cycle }) => cycle),
+    frames: [first.exit, other.catch, other.exit, second.catch],
+    strokes: [first, other, second],
   };
 }
 

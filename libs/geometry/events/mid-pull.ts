@@ -2,10 +2,11 @@ import type { BodyAxes } from '../calibration/plumb';
 import type { ArmMark, FrameMark } from '../arm';
 import { type Outcome, ok, refused } from '../outcome';
 import type { MarkingContext } from '../uncertainty/arm-uncertainty';
-import type { UncertaintyPart } from '../uncertainty/parts';
+import { combine, type CombinedUncertainty, type UncertaintyPart } from '../uncertainty/parts';
 import type { FrameIndex } from '../units/frame-index';
 import type { Microseconds } from '../units/microseconds';
 import type { Share } from '../units/share';
+import { eventInput, type EventOptions } from './event-moment';
 import { type FrameTimesUs, nearestFrame } from './frame-times';
 import {
   propagateMarks,
@@ -27,6 +28,9 @@ export interface MidPull {
   readonly parts: readonly UncertaintyPart[];
   /** Place in the pull, 0 catch to 1 exit. */
   readonly share: Share;
+  /** Standard uncertainty of that place, with the choice of catch and exit, and what it is made of. */
+  readonly shareUncertainty: number;
+  readonly shareParts: readonly UncertaintyPart[];
   /** The frame nearest in time. */
   readonly frame: FrameIndex;
   /** The marked frames on either side. */
@@ -56,7 +60,11 @@ export interface MidPullBracket {
 }
 
 /** Mid-pull of marks already sorted out. */
-export function midPullOf(pull: PullMarks, times: FrameTimesUs): Outcome<MidPull, MidPullReason> {
+export function midPullOf(
+  pull: PullMarks,
+  times: FrameTimesUs,
+  options: EventOptions = {},
+): Outcome<MidPull, MidPullReason> {
   const found = midPullBracket(pull);
   if (!found.ok) return found;
   const bracket = found.value;
@@ -65,15 +73,41 @@ export function midPullOf(pull: PullMarks, times: FrameTimesUs): Outcome<MidPull
   const u = propagateMarks(pull, [before.mark, after.mark], ([first, second], axes) =>
     first && second ? crossingTime(bracket, first, second, axes) : timeUs,
   );
+  const share = shareOfPull(pull.span, timeUs);
+  const shareU = shareUncertainty(pull, share, u.parts, times, options);
   return ok({
     timeUs: timeUs as Microseconds,
     uncertaintyUs: u.standard,
     parts: u.parts,
-    share: shareOfPull(pull.span, timeUs) as Share,
+    share: share as Share,
+    shareUncertainty: shareU.standard,
+    shareParts: shareU.parts,
     frame: nearestFrame(times, timeUs, pull.stroke.catch, pull.stroke.exit),
     frames: [before.mark.frame, after.mark.frame],
     gapShare: (after.timeUs - before.timeUs) / pull.span.lengthUs,
   });
+}
+
+/**
+ * Of s = (m − c)/(e − c) of mid-pull, catch and exit. With L = e − c,
+ * u(s)² = (u_m² + (1 − s)²·u_c² + s²·u_e²)/L² (JCGM 100:2008, eq. (10)).
+ */
+function shareUncertainty(
+  { stroke, span }: PullMarks,
+  share: number,
+  mid: readonly UncertaintyPart[],
+  times: FrameTimesUs,
+  options: EventOptions,
+): CombinedUncertainty {
+  const of = (event: 'catch' | 'exit', slope: number) => {
+    const { source, standard } = eventInput(stroke, event, times, options);
+    return { source, alone: Math.abs(slope * standard) / span.lengthUs };
+  };
+  return combine([
+    ...mid.map(({ source, alone }) => ({ source, alone: alone / span.lengthUs })),
+    of('catch', 1 - share),
+    of('exit', share),
+  ]);
 }
 
 export function midPullBracket(pull: PullMarks): Outcome<MidPullBracket, MidPullReason> {

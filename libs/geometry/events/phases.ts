@@ -1,10 +1,11 @@
 import { type Outcome, ok, refused } from '../outcome';
-import type { CombinedUncertainty, UncertaintyPart, UncertaintySource } from '../uncertainty/parts';
+import type { CombinedUncertainty, UncertaintyPart } from '../uncertainty/parts';
 import { propagate, type UncertainInput } from '../uncertainty/propagate';
 import { type Interval, normalInterval } from '../uncertainty/elbow-interval';
 import { worldSeconds } from '../units/microseconds';
-import { eventTimeUncertaintyUs, type FrameTimesUs, frameTimeUs } from './frame-times';
-import { checkOrder, type OrderReason, type StrokeEvents } from './stroke';
+import { eventInput, type EventOptions } from './event-moment';
+import type { FrameTimesUs } from './frame-times';
+import { checkOrder, type EventName, type OrderReason, type StrokeEvents } from './stroke';
 
 /** One phase of an arm's cycle. */
 export interface Phase {
@@ -42,11 +43,7 @@ export interface Phases {
 export type PhasesReason =
   OrderReason | 'no-next-entry' | 'no-duration' | 'bad-capture-rate' | 'mid-pull-outside-pull';
 
-export interface PhaseOptions {
-  /** World seconds per file second, above 0; 1 when left out. */
-  readonly captureRateFactor?: number;
-  /** See `EVENT_ERROR_FRAMES`. */
-  readonly eventErrorFrames?: number;
+export interface PhaseOptions extends EventOptions {
   /** True: take the cycle's own duration as exact, as published formulas do. */
   readonly cycleExact?: boolean;
 }
@@ -74,30 +71,22 @@ export function strokePhases(
   const order = checkOrder(stroke, times.length);
   if (!order.ok) return order;
   if (stroke.nextEntry === null) return refused('no-next-entry');
-  const at = (source: UncertaintySource, frame: number): Outcome<Moment, OrderReason> => {
-    const time = frameTimeUs(times, frame);
-    if (!time.ok) return time;
-    return ok({
-      source,
-      frame,
-      value: time.value,
-      standard: eventTimeUncertaintyUs(times, frame, options.eventErrorFrames),
-    });
-  };
-  const entry = at('entry-frame', stroke.entry);
-  const caught = at('catch-frame', stroke.catch);
-  const exit = at('exit-frame', stroke.exit);
-  const next = at('next-entry-frame', stroke.nextEntry);
-  if (!entry.ok) return entry;
-  if (!caught.ok) return caught;
-  if (!exit.ok) return exit;
-  if (!next.ok) return next;
-  const cycleUs = next.value.value - entry.value.value;
+  const at = (event: EventName, frame: number): Moment => ({
+    ...eventInput(stroke, event, times, options),
+    frame,
+  });
+  const entry = at('entry', stroke.entry);
+  const caught = at('catch', stroke.catch);
+  const exit = at('exit', stroke.exit);
+  const next = at('nextEntry', stroke.nextEntry);
+  const cycleUs = next.value - entry.value;
+  if (![entry, caught, exit, next].every(({ value }) => Number.isFinite(value)))
+    return refused('frame-outside-clip');
   if (cycleUs <= 0) return refused('no-duration');
-  if (mid && !(mid.timeUs >= caught.value.value && mid.timeUs <= exit.value.value))
+  if (mid && !(mid.timeUs >= caught.value && mid.timeUs <= exit.value))
     return refused('mid-pull-outside-pull');
 
-  const cycle: Cycle = { entry: entry.value, next: next.value, factor, exact: options.cycleExact ?? false };
+  const cycle: Cycle = { entry, next, factor, exact: options.cycleExact ?? false };
   const middle: Moment | null = mid && {
     source: 'mid-pull',
     frame: mid.frame,
@@ -105,13 +94,13 @@ export function strokePhases(
     standard: mid.uncertaintyUs,
   };
   return ok({
-    entryAndCatch: phase(entry.value, caught.value, cycle),
-    pull: middle && phase(caught.value, middle, cycle),
-    push: middle && phase(middle, exit.value, cycle),
-    propulsive: phase(caught.value, exit.value, cycle),
-    recovery: phase(exit.value, next.value, cycle),
+    entryAndCatch: phase(entry, caught, cycle),
+    pull: middle && phase(caught, middle, cycle),
+    push: middle && phase(middle, exit, cycle),
+    propulsive: phase(caught, exit, cycle),
+    recovery: phase(exit, next, cycle),
     cycleS: worldSeconds(cycleUs, factor),
-    cycleUncertaintyS: worldSeconds(Math.hypot(entry.value.standard, next.value.standard), factor),
+    cycleUncertaintyS: worldSeconds(Math.hypot(entry.standard, next.standard), factor),
   });
 }
 

@@ -2,8 +2,20 @@ import { type Outcome, ok, refused } from '../outcome';
 import type { FrameReason } from '../units/frame-index';
 import { type FrameTimesUs, frameTimeUs, nearestFrame } from './frame-times';
 
+/** The hand itself was seen on the frame, or the wrist stands in for it. */
+export type EventSource = 'hand-seen' | 'wrist-proxy';
+export type EventName = 'entry' | 'catch' | 'exit' | 'nextEntry';
+
+/** What each event was chosen by; the hand where nothing is said. */
+export interface EventSources {
+  readonly entrySource?: EventSource | undefined;
+  readonly catchSource?: EventSource | undefined;
+  readonly exitSource?: EventSource | undefined;
+  readonly nextEntrySource?: EventSource | undefined;
+}
+
 /** The events of one arm's cycle, as 0-based frames in presentation order. */
-export interface StrokeEvents {
+export interface StrokeEvents extends EventSources {
   /** The hand enters the water. */
   readonly entry: number;
   /** The hand begins to move backward. */

@@ -5,9 +5,9 @@ import type { Measured } from '../measures/measured';
 import type { ReadingContext } from '../measures/reading-context';
 import { type Outcome, ok, refused } from '../outcome';
 import { normalInterval } from '../uncertainty/elbow-interval';
-import type { UncertainInput } from '../uncertainty/propagate';
 import { wrapDegrees } from '../units/angle';
-import { eventTimeUncertaintyUs, type FrameTimesUs, nearestFrame } from './frame-times';
+import { eventInput } from './event-moment';
+import { type FrameTimesUs, nearestFrame } from './frame-times';
 import { propagateMarks, type PullMark, type PullMarks, pullMarks, type PullMarksReason } from './pull-marks';
 import type { StrokeEvents } from './stroke';
 
@@ -87,7 +87,7 @@ function between(
   tolerance: number,
 ): VerticalAt {
   const { stroke, span } = pull;
-  const events: UncertainInput[] = eventInputs(pull, times, context);
+  const events = (['catch', 'exit'] as const).map((event) => eventInput(stroke, event, times, context));
   const gapUs = after.timeUs - before.timeUs;
   const timeOf = (first: ArmMark, second: ArmMark, axes: BodyAxes): number =>
     before.timeUs + crossing(first, second, axes, tolerance) * gapUs;
@@ -112,15 +112,6 @@ function between(
     bracket: [before.mark.frame, after.mark.frame],
     gapShare: gapUs / span.lengthUs,
   };
-}
-
-function eventInputs(pull: PullMarks, times: FrameTimesUs, context: ReadingContext): UncertainInput[] {
-  const { stroke, span } = pull;
-  const standard = (frame: number): number => eventTimeUncertaintyUs(times, frame, context.eventErrorFrames);
-  return [
-    { source: 'catch-frame', value: span.catchUs, standard: standard(stroke.catch) },
-    { source: 'exit-frame', value: span.exitUs, standard: standard(stroke.exit) },
-  ];
 }
 
 /** Already within tolerance on the catch's own mark: vertical at 0, whatever the marks' spread. */

@@ -8,6 +8,7 @@ const context = {
   plumb: { top: { x: 900, y: 100 }, bottom: { x: 900, y: 900 } },
   travel: 'right',
   jointUncertaintyPx: { shoulder: 3, elbow: 2, wrist: 2 },
+  distance: { metres: 5, uncertaintyM: 0.1, fromFrame: 0, toFrame: 170 },
 } as const;
 
 function arm(frame: number, forearmDeg: number, upperArmDeg: number) {
@@ -25,7 +26,7 @@ const measures = strokeMeasures(stroke, marks, times, context);
 describe('a measure by its name', () => {
   it('carries parts largest first that add up to its uncertainty, and frames that ascend', () => {
     for (const name of strokeMeasureNames) {
-      const found = measuredByName(name, stroke, measures, times);
+      const found = measuredByName(name, measures);
       if (!found.ok) throw new Error(`${name}: ${found.reason}`);
       const { uncertainty, parts, frames, interval, value } = found.value;
       const alone = parts.map((part) => part.alone);
@@ -41,7 +42,7 @@ describe('a measure by its name', () => {
   });
 
   it('gives 37.5 cycles a minute for a cycle of 1.6 s, with two entries chosen to a frame', () => {
-    const found = measuredByName('strokeRate', stroke, measures, times);
+    const found = measuredByName('strokeRate', measures);
     if (!found.ok) throw new Error(found.reason);
     expect(found.value.value).toBeCloseTo(37.5, 12);
     // u(T) = √2·Δ/√3 inside the clip, the first frame has one neighbour only but the same Δ.
@@ -52,12 +53,15 @@ describe('a measure by its name', () => {
   it('says why there is none', () => {
     const open = { ...stroke, nextEntry: null };
     const without = strokeMeasures(open, marks.slice(0, 1), times, context);
-    expect(measuredByName('strokeRate', open, without, times)).toEqual({
+    expect(measuredByName('strokeRate', without)).toEqual({
       ok: false,
       reason: 'no-next-entry',
     });
-    expect(measuredByName('pull', open, without, times)).toEqual({ ok: false, reason: 'no-next-entry' });
+    expect(measuredByName('strokeLength', without)).toEqual({ ok: false, reason: 'no-next-entry' });
+    const unknown = strokeMeasures(stroke, marks, times, { ...context, distance: null });
+    expect(measuredByName('strokeIndex', unknown)).toEqual({ ok: false, reason: 'no-distance' });
+    expect(measuredByName('pull', without)).toEqual({ ok: false, reason: 'no-next-entry' });
     const few = strokeMeasures(stroke, marks.slice(0, 1), times, context);
-    expect(measuredByName('push', stroke, few, times)).toEqual({ ok: false, reason: 'too-few-marks' });
+    expect(measuredByName('push', few)).toEqual({ ok: false, reason: 'too-few-marks' });
   });
 });

@@ -1,3 +1,4 @@
+import type { KnownDistance } from '../events/known-distance';
 import type { MarkingContext } from '../uncertainty/arm-uncertainty';
 
 /** What a stroke's measures depend on beside its events, marks and frame times. */
@@ -8,4 +9,6 @@ export interface ReadingContext extends MarkingContext {
   readonly verticalToleranceDeg?: number;
   /** Half-width in frames of the spread of a chosen event frame; see `EVENT_ERROR_FRAMES`. */
   readonly eventErrorFrames?: number;
+  /** How far the swimmer travelled over two frames of the clip, where that is known. */
+  readonly distance?: KnownDistance | null;
 }

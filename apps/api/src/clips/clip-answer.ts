@@ -1,4 +1,4 @@
-import type { Clip } from '@stillstroke/contract/clip-facts';
+import type { Clip, KnownDistance } from '@stillstroke/contract/clip-facts';
 import type { Db } from '@stillstroke/db/open';
 import { inListed, preparedOnce } from '@stillstroke/db/prepared-once';
 import { clips, marks, sessions, strokes } from '@stillstroke/db/schema/film';
@@ -6,6 +6,7 @@ import {
   defaultJointUncertaintyPx,
   type JointUncertaintyPx,
 } from '@stillstroke/geometry/uncertainty/joint-uncertainty';
+import { clipDistances } from '@stillstroke/db/schema/timing';
 import { and, asc, eq, isNull, sql, type SQL } from 'drizzle-orm';
 import { notFound } from '../platform/problem';
 
@@ -40,19 +41,25 @@ function answersWhere(db: Db, where: SQL | undefined) {
   return db
     .select({
       clip: clips,
+      distance: clipDistances,
       athleteId: sessions.athleteId,
       markedFrames: sql<number>`(select count(distinct ${marks.frame}) from ${marks} where ${marks.clipId} = ${clips.id})`,
       strokeCount: sql<number>`(select count(*) from ${strokes} where ${strokes.clipId} = ${clips.id})`,
     })
     .from(clips)
     .innerJoin(sessions, eq(sessions.id, clips.sessionId))
+    .leftJoin(clipDistances, eq(clipDistances.clipId, clips.id))
     .where(where)
     .orderBy(asc(clips.createdAt), asc(clips.id));
 }
 
-type Found = { clip: ClipRow } & Pick<Clip, 'athleteId' | 'markedFrames' | 'strokeCount'>;
+type DistanceRow = typeof clipDistances.$inferSelect;
+type Found = { clip: ClipRow; distance: DistanceRow | null } & Pick<
+  Clip,
+  'athleteId' | 'markedFrames' | 'strokeCount'
+>;
 
-function asAnswer({ clip: row, ...counted }: Found): Clip {
+function asAnswer({ clip: row, distance, ...counted }: Found): Clip {
   const { plumbTopX, plumbTopY, plumbBottomX, plumbBottomY, figuresFormulas: _, ...rest } = row;
   const { markerId: _marker, jointShoulderPx, jointElbowPx: _elbow, jointWristPx: _wrist, ...others } = rest;
   const { fieldOfViewDeg, fieldOfViewMedium, ...facts } = others;
@@ -62,6 +69,7 @@ function asAnswer({ clip: row, ...counted }: Found): Clip {
     plumb: plumbOf({ plumbTopX, plumbTopY, plumbBottomX, plumbBottomY }),
     jointUncertaintyPx: { ...jointUncertaintyOf(row) },
     jointUncertaintyOwn: jointShoulderPx !== null,
+    distance: distance && distanceOf(distance),
     ...counted,
   };
 }
@@ -71,6 +79,10 @@ export function jointUncertaintyOf(row: ClipRow): JointUncertaintyPx {
   const { jointShoulderPx: shoulder, jointElbowPx: elbow, jointWristPx: wrist } = row;
   if (shoulder === null || elbow === null || wrist === null) return defaultJointUncertaintyPx(row);
   return { shoulder, elbow, wrist };
+}
+
+function distanceOf({ metres, uncertaintyM, fromFrame, toFrame }: DistanceRow): KnownDistance {
+  return { metres, uncertaintyM, fromFrame, toFrame };
 }
 
 /** The plumb line of a clip's row; null where none was drawn. */

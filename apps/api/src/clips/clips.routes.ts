@@ -6,6 +6,7 @@ import type { AppContext } from '../platform/context';
 import { mount } from '../platform/mount';
 import { liveClip } from '../sessions/live-film';
 import { deleteClip, getClip, getClipFrames, restoreClip, setCalibration, updateClip } from './clips.service';
+import { setDistance } from './distance.service';
 
 export function clipsRoutes(context: AppContext): Router {
   const router = Router();
@@ -18,6 +19,7 @@ export function clipsRoutes(context: AppContext): Router {
   mount(router, calls.putCalibration, ({ user, params, body }) =>
     setCalibration(context, user, params.id, body),
   );
+  mount(router, calls.putDistance, ({ user, params, body }) => setDistance(context, user, params.id, body));
   mount(router, calls.getClipMedia, ({ user, params, res }) =>
     sendFilm(context.settings, liveClip(context.db, user, params.id).clip, res),
   );

@@ -22,12 +22,14 @@ export function compareFigures(figures: readonly KeptFigure[]): MeasureCompariso
   const sides = Object.fromEntries(
     measureSchema.options.map((measure) => [measure, sidesOf(figures, measure)]),
   ) as Record<Measure, Sides>;
-  const compared = compareTogether(
-    Object.fromEntries(
-      measureSchema.options.map((measure) => [measure, compareSides(sides[measure])]),
-    ) as Record<Measure, ArmComparison>,
-  );
-  const together = testedTogether(Object.values(compared));
+  const alone = Object.fromEntries(
+    measureSchema.options.map((measure) => [measure, compareSides(sides[measure])]),
+  ) as Record<Measure, ArmComparison>;
+  const { strokeLength: _, strokeIndex: __, ...others } = alone;
+  // Length and index follow from the rate and the clip's speed: whether a distance is known must not move other verdicts.
+  const { strokeLength, strokeIndex } = compareTogether(alone);
+  const compared = { ...compareTogether(others), strokeLength, strokeIndex };
+  const together = testedTogether(Object.values(compareTogether(others)));
   return measureSchema.options.map((measure) => {
     const { difference, interval, verdict, moreStrokes } = compared[measure];
     const test = testOf(compared[measure], together);

@@ -6,6 +6,7 @@ import { VERTICAL_TOLERANCE_DEG } from '@stillstroke/geometry/events/vertical-at
 import { and, asc, eq, inArray, isNull } from 'drizzle-orm';
 import type { ClipRow } from '../clips/clip-answer';
 import { comparedView } from '../measures/compared-view';
+import { coordinationOf, keptPassages } from '../measures/coordination-figures';
 import { forearmCurves } from '../measures/forearm-curves';
 import { keptCautions } from '../measures/kept-cautions';
 import { keptFigures } from '../measures/kept-figures';
@@ -24,6 +25,7 @@ export function getComparison(
   const { taken, leftOut } = sortOut(db, session.id);
   const takenIds = new Set(taken.map(({ id }) => id));
   const figures = keptFigures(db, eq(sessions.id, session.id)).filter(({ clipId }) => takenIds.has(clipId));
+  const passages = keptPassages(db, eq(sessions.id, session.id)).filter(({ clipId }) => takenIds.has(clipId));
   return {
     sessionId: session.id,
     splits: {
@@ -33,6 +35,11 @@ export function getComparison(
     },
     breath: compareBreath(figures),
     view: taken[0]?.view ?? null,
+    coordination: {
+      all: coordinationOf(passages),
+      breathing: coordinationOf(passages.filter(({ breath }) => breath)),
+      notBreathing: coordinationOf(passages.filter(({ breath }) => !breath)),
+    },
     strokes: taken.flatMap((clip) => comparedStrokes(db, clip)),
     cautions: keptCautions(db, inArray(clips.id, [...takenIds])),
     plumbAssumed: taken.some((clip) => clip.plumbTopX === null),

@@ -57,6 +57,8 @@ export interface DemoClip {
   readonly stroke: StrokeKind;
   /** Null: not marked yet. */
   readonly marking: MarkingPlan | null;
+  /** Seconds of the film at which the swimmer passes the first band of the pool wall; the next is 5 m further on. */
+  readonly bandAtS?: number | undefined;
 }
 
 /** Every demo account signs in with this. */
@@ -69,6 +71,15 @@ const NORTH_POOL = 'Northmere Pool';
 /** Spread of the marking, pixels: what the product assumes of a coach at this picture size until it knows better. */
 const SPREAD_PX = 1;
 
+/** When the swimmers of these films pass a band of the pool wall, seconds of the film. */
+const BAND_AT_S: Partial<Record<FilmName, number>> = {
+  'ines-july': 2.63,
+  'ines-october': 1,
+  'ines-november': 2.97,
+  'rhona-june': 1.45,
+  'rhona-november': 3.42,
+};
+
 type Marked = Omit<MarkingPlan, 'spreadPx' | 'joints'> & Partial<MarkingPlan>;
 
 function clip(film: FilmName, name: string, marking: Marked | null): DemoClip {
@@ -77,6 +88,7 @@ function clip(film: FilmName, name: string, marking: Marked | null): DemoClip {
     name,
     stroke: 'full',
     marking: marking && { spreadPx: SPREAD_PX, joints: true, ...marking },
+    ...(marking && film in BAND_AT_S && { bandAtS: BAND_AT_S[film] }),
   };
 }
 

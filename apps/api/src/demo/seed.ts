@@ -2,6 +2,7 @@ import { clubs } from '@stillstroke/db/schema/club';
 import type { SignedInUser } from '@stillstroke/contract/auth';
 import { hashPassword } from '../auth/passwords';
 import { setCalibration } from '../clips/clips.service';
+import { setDistance } from '../clips/distance.service';
 import { putMark } from '../marks/marks.service';
 import { keepFilm } from '../media/add-film';
 import { dropFolder } from '../media/clip-store';
@@ -17,7 +18,7 @@ import {
   type WaitingClip,
 } from './demo-films';
 import { enterClub, idOf } from './demo-people';
-import type { FilmName } from './film-truth';
+import type { FilmName, FilmTruth } from './film-truth';
 import { marksFromTruth } from './marks-from-truth';
 import { DEMO_CLUBS, DEMO_PASSWORD, type DemoClip, type DemoClub, type DemoSession } from './season';
 
@@ -121,6 +122,7 @@ function enterSession(
     if (!laidOut) continue;
     const { id } = keepFilm(then, athleteId, session.id, laidOut.incoming, laidOut.film);
     if (clip.marking) enterMarking(then, coach, id, marksFromTruth(laidOut.truth, clip.marking));
+    if (clip.bandAtS !== undefined) enterBands(then, coach, id, laidOut.truth, clip.bandAtS);
   }
 }
 
@@ -134,6 +136,26 @@ function enterMarking(
   setCalibration(context, coach, clipId, { plumb });
   for (const { arm, frame, ...joints } of marks) putMark(context, coach, { id: clipId, arm, frame }, joints);
   for (const stroke of strokes) createStroke(context, coach, clipId, stroke);
+}
+
+/** The rendered pool has a dark band every 5 m, and its swimmers swim at one speed. */
+const BANDS_M = 5;
+const BANDS_UNCERTAINTY_M = 0.05;
+export const DEMO_SWIM_SPEED = 1.42;
+
+function enterBands(
+  context: AppContext,
+  coach: SignedInUser,
+  clipId: string,
+  { framesPerSecond }: FilmTruth,
+  bandAtS: number,
+): void {
+  const [fromFrame, toFrame] = [bandAtS, bandAtS + BANDS_M / DEMO_SWIM_SPEED].map((s) =>
+    Math.round(s * framesPerSecond),
+  );
+  if (fromFrame === undefined || toFrame === undefined) return;
+  const distance = { metres: BANDS_M, uncertaintyM: BANDS_UNCERTAINTY_M, fromFrame, toFrame };
+  setDistance(context, coach, clipId, { distance });
 }
 
 /** A clock that starts at an instant and moves on a second with every look, so that what comes later is later. */

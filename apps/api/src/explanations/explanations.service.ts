@@ -29,12 +29,7 @@ export function explainStroke(
   const { clip } = liveClip(db, user, stroke.clipId);
   const { marks, times, context } = readStrokes(db, clip, ({ id }) => id === stroke.id);
   const events = strokeEvents(stroke);
-  const measured = measuredByName(
-    measure,
-    events,
-    strokeMeasures(events, marks[stroke.arm], times, context),
-    times,
-  );
+  const measured = measuredByName(measure, strokeMeasures(events, marks[stroke.arm], times, context));
   const figure = measuredFigure(measured);
   return {
     strokeId: stroke.id,

@@ -31,6 +31,8 @@ describe('how a figure of a stroke came about', () => {
 
   it('is the same number as the measures show, for every measure, with its parts largest first', async () => {
     const coach = await club.agentFor('coach');
+    const distance = { metres: 5, uncertaintyM: 0.05, fromFrame: 0, toFrame: 150 };
+    await coach.mutate('put', `/api/clips/${clipId}/distance`).send({ distance });
     const { items } = (await coach.get(`/api/clips/${clipId}/measures`)).body as {
       items: [Record<string, Figure> & { phases: Record<string, Figure> }];
     };

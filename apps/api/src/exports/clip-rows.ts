@@ -6,7 +6,7 @@ import type { Row } from './csv-text';
 /** Rows of the tables that are about one clip. */
 
 export function clipTableRow(sessionId: string, clip: ExportClip): Row {
-  const { plumb, jointUncertaintyPx: joint } = clip;
+  const { plumb, distance, jointUncertaintyPx: joint } = clip;
   return {
     clip_id: clip.id,
     session_id: sessionId,
@@ -25,6 +25,10 @@ export function clipTableRow(sessionId: string, clip: ExportClip): Row {
     plumb_top_y_px: plumb?.top.y ?? null,
     plumb_bottom_x_px: plumb?.bottom.x ?? null,
     plumb_bottom_y_px: plumb?.bottom.y ?? null,
+    distance_m: distance?.metres ?? null,
+    distance_u_m: distance?.uncertaintyM ?? null,
+    distance_from_frame: distance?.fromFrame ?? null,
+    distance_to_frame: distance?.toFrame ?? null,
     joint_u_shoulder_px: joint.shoulder,
     joint_u_elbow_px: joint.elbow,
     joint_u_wrist_px: joint.wrist,
@@ -68,12 +72,14 @@ export function readingRows(clip: ExportClip): Row[] {
 export function eventRows(clip: ExportClip): Row[] {
   return clip.strokes.flatMap((stroke) => {
     const chosen = [
-      ['entry', stroke.entry],
-      ['catch', stroke.catch],
-      ['exit', stroke.exit],
-      ['next_entry', stroke.nextEntry],
+      ['entry', stroke.entry, stroke.entrySource],
+      ['catch', stroke.catch, stroke.catchSource],
+      ['exit', stroke.exit, stroke.exitSource],
+      ['next_entry', stroke.nextEntry, stroke.nextEntrySource],
     ] as const;
-    return chosen.flatMap(([event, frame]) => (frame === null ? [] : [eventRow(clip, stroke, event, frame)]));
+    return chosen.flatMap(([event, frame, source]) =>
+      frame === null ? [] : [{ ...eventRow(clip, stroke, event, frame), source }],
+    );
   });
 }
 

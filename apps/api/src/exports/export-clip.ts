@@ -36,9 +36,9 @@ export function exportedClip(db: Db, row: ClipRow): ExportClip {
   };
 }
 
-function exportedStroke({ stroke, measures, times }: MeasuredStroke): ExportStroke {
+function exportedStroke({ stroke, measures }: MeasuredStroke): ExportStroke {
   const { clipId: _clip, version: _version, ...events } = strokeAnswer(stroke);
-  const figures = figuresByMeasure(strokeEvents(stroke), measures, times);
+  const figures = figuresByMeasure(strokeEvents(stroke), measures);
   return {
     ...events,
     figures: Object.fromEntries(measureSchema.options.map((name) => [name, exportedFigure(figures[name])])),

@@ -7,7 +7,7 @@ import type {
   ExportTrend,
 } from '@stillstroke/contract/export';
 import { snake, unitCode } from '@stillstroke/contract/export-dictionary';
-import { measureSchema, type Measure } from '@stillstroke/contract/measures';
+import { trendMeasureSchema, type TrendMeasure } from '@stillstroke/contract/trend';
 import { clips } from '@stillstroke/db/schema/film';
 import { and, asc, eq, isNull } from 'drizzle-orm';
 import type { ClipRow } from '../clips/clip-answer';
@@ -107,10 +107,15 @@ function armMean({ count, mean, interval }: BreathComparison['others']): ExportC
 
 /** Every measure over the athlete's sessions, each arm. */
 export function exportedTrend(context: Context, user: SignedInUser, athleteId: string): ExportTrend[] {
-  return measureSchema.options.flatMap((measure) => trendOf(context, user, athleteId, measure));
+  return trendMeasureSchema.options.flatMap((measure) => trendOf(context, user, athleteId, measure));
 }
 
-function trendOf(context: Context, user: SignedInUser, athleteId: string, measure: Measure): ExportTrend[] {
+function trendOf(
+  context: Context,
+  user: SignedInUser,
+  athleteId: string,
+  measure: TrendMeasure,
+): ExportTrend[] {
   const { unit, view, arms } = getTrend(context, user, athleteId, { measure, stroke: 'full' });
   return arms.map(({ arm, points, change, interval, detectable, verdict, slope }) => ({
     measure,

@@ -70,7 +70,8 @@ describe('an export', () => {
       expect(exportFileSchema.safeParse(await json(kind, id)).error).toBeUndefined();
     expect((await json('clips', clipId)).sessions[0]?.comparison).toEqual([]);
     expect((await json('athletes', club.ids.athletes.own)).trend).toHaveLength(
-      2 * measureSchema.options.length,
+      // The index of coordination has one line, both arms together.
+      2 * measureSchema.options.length + 1,
     );
   });
 
@@ -158,7 +159,7 @@ describe('an export', () => {
     expect(of('marks').some((row) => Number(row['wrist_x_px']) === clip?.marks[0]?.wrist.x)).toBe(true);
     expect(of('comparison')).toHaveLength(3 * measureSchema.options.length);
     expect(of('breath')).toHaveLength(3 * measureSchema.options.length);
-    expect(of('change')).toHaveLength(2 * measureSchema.options.length);
+    expect(of('change')).toHaveLength(2 * measureSchema.options.length + 1);
     expect(of('trend').length).toBeGreaterThan(0);
   });
 

@@ -1,15 +1,23 @@
 import type { ExportClip, ExportMark, ExportStroke } from '@stillstroke/contract/export';
 import type { ImportChoice, ImportCounts } from '@stillstroke/contract/import';
 import { marks, strokes } from '@stillstroke/db/schema/film';
+import type { KnownDistance } from '@stillstroke/geometry/events/known-distance';
 import { asc, eq } from 'drizzle-orm';
 import { fieldOfViewOf, plumbOf, type ClipRow } from '../clips/clip-answer';
-import { frameMark, type MarkRow, type Reader, type StrokeRow } from '../measures/clip-reading';
+import {
+  frameMark,
+  knownDistance,
+  type MarkRow,
+  type Reader,
+  type StrokeRow,
+} from '../measures/clip-reading';
 import { strokeAnswer } from '../strokes/stroke-answer';
 
 /** What is on a clip of ours now. */
 export interface OnClip {
   readonly strokes: readonly StrokeRow[];
   readonly marks: readonly MarkRow[];
+  readonly distance: KnownDistance | null;
 }
 
 export function onClip(db: Reader, clipId: string): OnClip {
@@ -26,6 +34,7 @@ export function onClip(db: Reader, clipId: string): OnClip {
       .where(eq(marks.clipId, clipId))
       .orderBy(asc(marks.arm), asc(marks.frame))
       .all(),
+    distance: knownDistance(db, clipId),
   };
 }
 
@@ -40,7 +49,7 @@ export interface ClipPlan {
   readonly setUp: readonly string[];
   readonly strokes: readonly Beside<ExportStroke, StrokeRow>[];
   readonly marks: readonly Beside<ExportMark, MarkRow>[];
-  readonly onlyHere: OnClip;
+  readonly onlyHere: Pick<OnClip, 'strokes' | 'marks'>;
 }
 
 /** Sets what a file has for a clip beside what is there. */
@@ -50,7 +59,7 @@ export function planOf(from: ExportClip, to: ClipRow, there: OnClip): ClipPlan {
   const takenStrokes = new Set(besideStrokes.flatMap(({ ours }) => ours));
   const takenMarks = new Set(besideMarks.flatMap(({ ours }) => ours));
   return {
-    setUp: changedSetUp(from, to),
+    setUp: changedSetUp(from, to, there.distance),
     strokes: besideStrokes,
     marks: besideMarks,
     onlyHere: {
@@ -98,9 +107,10 @@ function isSame(a: unknown, b: unknown): boolean {
 /** What a person says about a clip and its picture, and what a file brings along of it. */
 const setUpFields = ['view', 'travel', 'stroke', 'captureRateFactor', 'fieldOfView', 'plumb'] as const;
 
-function changedSetUp(from: ExportClip, to: ClipRow): string[] {
+function changedSetUp(from: ExportClip, to: ClipRow, distance: KnownDistance | null): string[] {
   const here = { ...to, plumb: plumbOf(to), fieldOfView: fieldOfViewOf(to) };
-  return setUpFields.filter((field) => !isSame(points(here[field]), points(from[field])));
+  const changed: string[] = setUpFields.filter((field) => !isSame(points(here[field]), points(from[field])));
+  return isSame(distanceParts(distance), distanceParts(from.distance)) ? changed : [...changed, 'distance'];
 }
 
 /** Plumbs and fields of view as lists, since objects from rows and from files may have their keys in another order. */
@@ -110,6 +120,10 @@ function points(
   if (value === null || typeof value !== 'object') return value;
   if ('deg' in value) return [value.deg, value.medium];
   return [value.top.x, value.top.y, value.bottom.x, value.bottom.y];
+}
+
+function distanceParts(distance: KnownDistance | null): unknown {
+  return distance && [distance.metres, distance.uncertaintyM, distance.fromFrame, distance.toFrame];
 }
 
 export function countsOf(beside: readonly Beside<unknown, unknown>[], onlyHere: number): ImportCounts {

@@ -32,6 +32,10 @@ describe('bringing an export back in', () => {
           verticalAt: (arm === 'left' ? 0.4 : 0.6) + n * 0.013,
         });
     await coach.mutate('put', `/api/clips/${clipId}/calibration`).send({ plumb });
+    const distance = { metres: 12.5, uncertaintyM: 0.1, fromFrame: 20, toFrame: 520 };
+    await coach.mutate('put', `/api/clips/${clipId}/distance`).send({ distance });
+    const { items } = (await coach.get(`/api/clips/${clipId}/strokes`)).body as { items: { id: string }[] };
+    await coach.mutate('patch', `/api/strokes/${items[0]?.id}`).send({ exitSource: 'wrist-proxy' });
     file = await exported();
   });
   afterEach(() => club.close());
@@ -67,6 +71,7 @@ describe('bringing an export back in', () => {
   it('gives exactly the same figures, after everything on the clip was lost', async () => {
     wipe();
     await coach.mutate('put', `/api/clips/${clipId}/calibration`).send({ plumb: null });
+    await coach.mutate('put', `/api/clips/${clipId}/distance`).send({ distance: null });
     await coach.mutate('patch', `/api/clips/${clipId}`).send({ travel: 'left', captureRateFactor: 0.5 });
     expect(untimed(await exported())).not.toEqual(untimed(file));
     const looked = first(await preview());
@@ -74,12 +79,12 @@ describe('bringing an export back in', () => {
       to: { id: clipId },
       foundBy: 'film',
       refusal: null,
-      setUp: ['travel', 'captureRateFactor', 'plumb'],
+      setUp: ['travel', 'captureRateFactor', 'plumb', 'distance'],
       strokes: counts(6, 0, 0),
       marks: counts(12, 0, 0),
     });
-    // Four angles and their uncertainties a mark, eight measures and theirs a stroke.
-    expect(looked.figures).toEqual({ same: 12 * 8 + 6 * 16, different: 0 });
+    // Four angles and their uncertainties a mark, ten measures and theirs a stroke.
+    expect(looked.figures).toEqual({ same: 12 * 8 + 6 * 20, different: 0 });
     expect((await exported()).sessions[0]?.clips[0]?.marks).toEqual([]);
     const answer = await bringIn('take');
     expect(answer.status).toBe(200);
@@ -168,7 +173,7 @@ describe('bringing an export back in', () => {
     const answer = await coach.mutate('post', to).send({ file, pairs, choice: 'take', basis: looked.basis });
     expect(first(answer.body as ImportPreview)).toMatchObject({
       foundBy: 'choice',
-      figures: { same: 12 * 8 + 6 * 16, different: 0 },
+      figures: { same: 12 * 8 + 6 * 20, different: 0 },
     });
     // The first clip keeps its strokes; the copy's have ids of their own.
     expect(untimed(await exported())).toEqual(untimed(file));
@@ -183,7 +188,7 @@ describe('bringing an export back in', () => {
     const stroke = clip.strokes[0];
     if (stroke?.figures['verticalAt']) stroke.figures['verticalAt'].value = 0.123;
     if (stroke) stroke.figures['ofAnotherTime'] = { value: 1, uncertainty: 1, frame: 1, reason: null };
-    expect(first(await preview()).figures).toEqual({ same: 12 * 8 + 6 * 16 - 1, different: 1 });
+    expect(first(await preview()).figures).toEqual({ same: 12 * 8 + 6 * 20 - 1, different: 1 });
   });
 
   it('refuses what does not fit in words, and then changes nothing at all', async () => {

@@ -6,7 +6,9 @@ import { clips, marks, strokes } from '@stillstroke/db/schema/film';
 import { cameraRoll } from '@stillstroke/geometry/calibration/plumb';
 import { and, eq, inArray } from 'drizzle-orm';
 import type { ClipRow } from '../clips/clip-answer';
+import { checkDistance, keepDistance } from '../clips/distance.service';
 import { checkFrame, checkJoints, markColumns } from '../marks/mark-rules';
+import { knownDistance } from '../measures/clip-reading';
 import { refreshClipFigures } from '../measures/figures';
 import { settleMarker } from '../repeatability/marker';
 import { HttpProblem } from '../platform/problem';
@@ -36,6 +38,7 @@ export function writeClip(
   stamp: Stamp,
 ): void {
   writeSetUp(tx, from, to, choice);
+  writeDistance(tx, from, to, choice, stamp);
   writeStrokes(tx, to, plan, choice, stamp);
   writeMarks(tx, { ...to, travel: from.travel }, plan, choice, stamp);
   settleMarker(tx, to.id);
@@ -70,6 +73,18 @@ function writeSetUp(tx: Transaction, from: ExportClip, to: ClipRow, choice: Impo
     })
     .where(eq(clips.id, to.id))
     .run();
+}
+
+function writeDistance(
+  tx: Transaction,
+  { distance }: ExportClip,
+  to: ClipRow,
+  choice: ImportChoice,
+  stamp: Stamp,
+): void {
+  if (choice === 'add' && (distance === null || knownDistance(tx, to.id) !== null)) return;
+  if (distance !== null) checkDistance(tx, to, distance);
+  keepDistance(tx, to.id, distance, stamp);
 }
 
 function writeStrokes(

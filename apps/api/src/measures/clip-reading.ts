@@ -1,7 +1,9 @@
 import { preparedOnce } from '@stillstroke/db/prepared-once';
 import { clipFrames, clips, marks, strokes } from '@stillstroke/db/schema/film';
+import { clipDistances } from '@stillstroke/db/schema/timing';
 import type { Db } from '@stillstroke/db/open';
 import type { FrameMark } from '@stillstroke/geometry/arm';
+import type { KnownDistance } from '@stillstroke/geometry/events/known-distance';
 import type { StrokeEvents } from '@stillstroke/geometry/events/stroke';
 import type { ReadingContext } from '@stillstroke/geometry/measures/reading-context';
 import { strokeMeasures, type StrokeMeasures } from '@stillstroke/geometry/measures/stroke-measures';
@@ -75,6 +77,10 @@ export function strokeEvents(row: StrokeRow): StrokeEvents {
     catch: row.catchFrame,
     exit: row.exitFrame,
     nextEntry: row.nextEntryFrame,
+    entrySource: row.entrySource,
+    catchSource: row.catchSource,
+    exitSource: row.exitSource,
+    nextEntrySource: row.nextEntrySource,
   };
 }
 
@@ -86,6 +92,20 @@ export function frameMark(row: MarkRow): FrameMark {
     wrist: { x: row.wristX, y: row.wristY },
   };
 }
+
+/** How far the swimmer travelled over two frames of the clip; null where nobody said. */
+export function knownDistance(db: Reader, clipId: string): KnownDistance | null {
+  return distanceQuery(db).get({ clipId }) ?? null;
+}
+
+const distanceQuery = preparedOnce((db) => {
+  const { metres, uncertaintyM, fromFrame, toFrame } = clipDistances;
+  return db
+    .select({ metres, uncertaintyM, fromFrame, toFrame })
+    .from(clipDistances)
+    .where(eq(clipDistances.clipId, sql.placeholder('clipId')))
+    .prepare();
+});
 
 /** Frame times of a clip in whole microseconds. */
 export function clipTimes(db: Reader, clipId: string): number[] {
@@ -110,7 +130,7 @@ export function readStrokes(db: Reader, clip: ClipRow, wanted: (stroke: StrokeRo
     strokes: found,
     marks: { left: marksOf('left'), right: marksOf('right') },
     times: found.length === 0 ? [] : clipTimes(db, clip.id),
-    context: readingContext(clip),
+    context: { ...readingContext(clip), distance: knownDistance(db, clip.id) },
   };
 }
 

@@ -3,6 +3,7 @@ import type { Db } from '@stillstroke/db/open';
 import { clips, strokeFigures } from '@stillstroke/db/schema/film';
 import { eq, inArray, ne } from 'drizzle-orm';
 import type { AppContext } from '../platform/context';
+import { refreshCoordination } from './coordination-figures';
 import { clipRow, measureStrokes, strokeEvents, type StrokeRow } from './clip-reading';
 import { keepCautions } from './kept-cautions';
 import { figuresByMeasure, setUpPart } from './stroke-figures';
@@ -15,12 +16,14 @@ type Writer = Pick<Db, 'select' | 'insert' | 'delete' | 'update'>;
 /** Computes the kept figures of a clip's strokes again; call it in the transaction that changed what they depend on. */
 export function refreshClipFigures(tx: Writer, clipId: string): void {
   refresh(tx, clipId, () => true);
+  refreshCoordination(tx, clipId);
   tx.update(clips).set({ figuresFormulas: FORMULAS }).where(eq(clips.id, clipId)).run();
 }
 
-/** The same of one stroke. */
+/** The same of one stroke, and what both arms do together, in which it may have a part. */
 export function refreshStrokeFigures(tx: Writer, clipId: string, strokeId: string): void {
   refresh(tx, clipId, ({ id }) => id === strokeId);
+  refreshCoordination(tx, clipId);
 }
 
 /** The same of those strokes of an arm that a mark on a frame has a part in. */
@@ -40,8 +43,8 @@ function refresh(tx: Writer, clipId: string, wanted: (stroke: StrokeRow) => bool
   const strokeIds = measured.map(({ stroke }) => stroke.id);
   keepCautions(tx, clip, measured);
   tx.delete(strokeFigures).where(inArray(strokeFigures.strokeId, strokeIds)).run();
-  const rows = measured.flatMap(({ stroke, measures, times }) => {
-    const figures = figuresByMeasure(strokeEvents(stroke), measures, times);
+  const rows = measured.flatMap(({ stroke, measures }) => {
+    const figures = figuresByMeasure(strokeEvents(stroke), measures);
     return measureSchema.options.flatMap((measure) => {
       const { value, uncertainty, frame } = figures[measure];
       if (value === null || uncertainty === null || frame === null) return [];

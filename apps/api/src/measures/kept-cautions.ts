@@ -1,4 +1,4 @@
-import type { Measure } from '@stillstroke/contract/measures';
+import type { TrendMeasure } from '@stillstroke/contract/trend';
 import type { CautionSummary } from '@stillstroke/contract/view-cautions';
 import type { Db } from '@stillstroke/db/open';
 import { clips, sessions, strokes } from '@stillstroke/db/schema/film';
@@ -39,7 +39,7 @@ export function keepCautions(tx: Writer, clip: ClipRow, measured: readonly Measu
 }
 
 /** The same over many strokes, in short: for each code, measure and arm the largest size. What is deleted is left out. */
-export function keptCautions(db: Pick<Db, 'select'>, of: SQL, measure?: Measure): CautionSummary[] {
+export function keptCautions(db: Pick<Db, 'select'>, of: SQL, measure?: TrendMeasure): CautionSummary[] {
   const asked = strokeReadingNames.filter((name) => measure === undefined || name === measure);
   if (asked.length === 0) return [];
   const rows = db

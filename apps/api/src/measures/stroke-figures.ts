@@ -1,21 +1,27 @@
 import type { Figure, Measure, StrokeMeasures as StrokeAnswer } from '@stillstroke/contract/measures';
-import { eventTimeUncertaintyUs, type FrameTimesUs } from '@stillstroke/geometry/events/frame-times';
 import type { StrokeEvents } from '@stillstroke/geometry/events/stroke';
 import type { Measured } from '@stillstroke/geometry/measures/measured';
 import { measuredByName, type StrokeMeasureName } from '@stillstroke/geometry/measures/measured-by-name';
 import type { StrokeMeasures } from '@stillstroke/geometry/measures/stroke-measures';
 import type { Outcome } from '@stillstroke/geometry/outcome';
+import type { UncertaintySource } from '@stillstroke/geometry/uncertainty/parts';
 
 /** The figures of a stroke as the contract names them, from what the geometry library measured. */
 export function figuresOf(
   events: StrokeEvents,
   measures: StrokeMeasures,
-  times: FrameTimesUs,
 ): Pick<
   StrokeAnswer,
-  'phases' | 'verticalAtShare' | 'peakElbowDrop' | 'elbowAtMidPull' | 'midPull' | 'strokeRate'
+  | 'phases'
+  | 'verticalAtShare'
+  | 'peakElbowDrop'
+  | 'elbowAtMidPull'
+  | 'midPull'
+  | 'strokeRate'
+  | 'strokeLength'
+  | 'strokeIndex'
 > {
-  const named = (name: StrokeMeasureName) => measuredFigure(measuredByName(name, events, measures, times));
+  const named = (name: StrokeMeasureName) => measuredFigure(measuredByName(name, measures));
   return {
     phases: {
       entryAndCatch: named('entryAndCatch'),
@@ -26,8 +32,10 @@ export function figuresOf(
     verticalAtShare: named('verticalAt'),
     peakElbowDrop: named('peakDrop'),
     elbowAtMidPull: named('elbowAtMidPull'),
-    midPull: midPullFigure(events, measures, times),
+    midPull: midPullFigure(events, measures),
     strokeRate: named('strokeRate'),
+    strokeLength: named('strokeLength'),
+    strokeIndex: named('strokeIndex'),
   };
 }
 
@@ -35,31 +43,31 @@ export function figuresOf(
 export function figuresByMeasure(
   events: StrokeEvents,
   measures: StrokeMeasures,
-  times: FrameTimesUs,
 ): Readonly<Record<Measure, Figure>> {
-  const { phases, verticalAtShare, peakElbowDrop, elbowAtMidPull, strokeRate } = figuresOf(
-    events,
-    measures,
-    times,
-  );
-  return { ...phases, verticalAt: verticalAtShare, peakDrop: peakElbowDrop, elbowAtMidPull, strokeRate };
+  const { phases, verticalAtShare, peakElbowDrop, midPull: _, ...named } = figuresOf(events, measures);
+  return { ...phases, ...named, verticalAt: verticalAtShare, peakDrop: peakElbowDrop };
 }
 
 /**
- * The part of a measure's standard uncertainty that every stroke of the clip shares: the camera's roll. Zero where it
- * cancels, as in angles between two segments, and in shares of time.
+ * The part of a measure's standard uncertainty that every stroke of the clip shares: the camera's roll, and the clip's
+ * speed over its known distance. Zero where it cancels, as in angles between two segments, and in shares of time.
  */
 export function setUpPart(measures: StrokeMeasures, measure: Measure): number {
   const outcome = sharing(measures, measure);
   if (!outcome?.ok) return 0;
-  return outcome.value.parts.find(({ source }) => source === 'roll')?.alone ?? 0;
+  const shared = outcome.value.parts.filter(({ source }) => sharedSources.has(source));
+  return Math.hypot(...shared.map(({ alone }) => alone));
 }
+
+const sharedSources: ReadonlySet<UncertaintySource> = new Set(['roll', 'distance', 'time'] as const);
 
 function sharing(measures: StrokeMeasures, measure: Measure): Outcome<Measured> | null {
   switch (measure) {
     case 'verticalAt':
     case 'peakDrop':
     case 'elbowAtMidPull':
+    case 'strokeLength':
+    case 'strokeIndex':
       return measures[measure];
     default:
       return null;
@@ -80,19 +88,15 @@ export function measuredFigure(outcome: Outcome<Measured>): Figure {
   return { value, uncertainty, reason: null, frame, frames: [...frames] };
 }
 
-/**
- * Share of the pull at which the hand passes under the shoulder: s = (m − c)/(e − c) of mid-pull, catch and exit. With
- * L = e − c, u(s)² = (u_m² + (1 − s)²·u_c² + s²·u_e²)/L² (JCGM 100:2008, eq. (10)).
- */
-function midPullFigure(events: StrokeEvents, { midPull }: StrokeMeasures, times: FrameTimesUs): Figure {
+/** Share of the pull at which the hand passes under the shoulder. */
+function midPullFigure(events: StrokeEvents, { midPull }: StrokeMeasures): Figure {
   if (!midPull.ok) return none(midPull.reason);
-  const { share, frame, frames, uncertaintyUs } = midPull.value;
-  const lengthUs = (times[events.exit] ?? 0) - (times[events.catch] ?? 0);
-  const uncertainty =
-    Math.hypot(
-      uncertaintyUs,
-      (1 - share) * eventTimeUncertaintyUs(times, events.catch),
-      share * eventTimeUncertaintyUs(times, events.exit),
-    ) / lengthUs;
-  return { value: share, uncertainty, reason: null, frame, frames: [events.catch, ...frames, events.exit] };
+  const { share, shareUncertainty, frame, frames } = midPull.value;
+  return {
+    value: share,
+    uncertainty: shareUncertainty,
+    reason: null,
+    frame,
+    frames: [events.catch, ...frames, events.exit],
+  };
 }

@@ -11,4 +11,6 @@ export const unitOf: Readonly<Record<Measure, z.infer<typeof unitSchema>>> = {
   push: 'share',
   recovery: 'share',
   strokeRate: 'perMinute',
+  strokeLength: 'm',
+  strokeIndex: 'm2PerS',
 };

@@ -90,10 +90,8 @@ function strokeStand(db: Reader, athleteId: string, source: SourceOf<'stroke'>):
   const [measured] = found ? measureStrokes(db, found.clip, ({ id }) => id === strokeId) : [];
   if (!found || !measured)
     return { ...base, words: `${measureNames[measure]} of one stroke`, reason: 'gone' };
-  const { stroke, measures, times } = measured;
-  const { value, uncertainty, reason, frame } = figuresByMeasure(strokeEvents(stroke), measures, times)[
-    measure
-  ];
+  const { stroke, measures } = measured;
+  const { value, uncertainty, reason, frame } = figuresByMeasure(strokeEvents(stroke), measures)[measure];
   return {
     ...base,
     words: `${measureNames[measure]}, ${stroke.arm} arm, stroke from frame ${stroke.entryFrame}${stroke.breath ? ', with a breath' : ''}`,

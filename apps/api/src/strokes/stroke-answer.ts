@@ -12,17 +12,25 @@ export function strokeAnswer(row: typeof strokes.$inferSelect): Stroke {
     exit: row.exitFrame,
     nextEntry: row.nextEntryFrame,
     breath: row.breath,
+    entrySource: row.entrySource,
+    catchSource: row.catchSource,
+    exitSource: row.exitSource,
+    nextEntrySource: row.nextEntrySource,
     version: row.version,
   };
 }
 
 /** What of a stroke can be changed, as its row keeps it. */
-export function strokeColumns(fields: Pick<Stroke, 'entry' | 'catch' | 'exit' | 'nextEntry' | 'breath'>) {
+export function strokeColumns(fields: Omit<Stroke, 'id' | 'clipId' | 'arm' | 'version'>) {
   return {
     entryFrame: fields.entry,
     catchFrame: fields.catch,
     exitFrame: fields.exit,
     nextEntryFrame: fields.nextEntry,
     breath: fields.breath,
+    entrySource: fields.entrySource,
+    catchSource: fields.catchSource,
+    exitSource: fields.exitSource,
+    nextEntrySource: fields.nextEntrySource,
   };
 }

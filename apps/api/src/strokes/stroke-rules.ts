@@ -31,7 +31,10 @@ const orderWords: Record<Exclude<OrderReason, 'frame-outside-clip' | 'frame-not-
  *
  * @throws HttpProblem strokes-overlap that names the frames of the other
  */
-export function checkNoOverlap(db: Pick<Db, 'select'>, stroke: Omit<Stroke, 'version' | 'breath'>): void {
+export function checkNoOverlap(
+  db: Pick<Db, 'select'>,
+  stroke: Pick<Stroke, 'id' | 'clipId' | 'arm' | 'entry' | 'exit' | 'nextEntry'>,
+): void {
   const others = db
     .select()
     .from(strokes)

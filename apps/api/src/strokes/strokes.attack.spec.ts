@@ -61,11 +61,13 @@ describe('attacks on strokes', () => {
       { breath: 'yes' },
       { breath: undefined },
       { midPull: 30 },
+      { entrySource: 'guessed' },
+      { exitSource: null },
       { id: 'mine' },
     ];
     for (const change of wrong) expect([change, (await add(change)).status]).toEqual([change, 400]);
     const { id } = (await add()).body as Stroke;
-    for (const body of [{}, { version: 1 }, { arm: 'right' }, { entry: 1e99 }])
+    for (const body of [{}, { version: 1 }, { arm: 'right' }, { entry: 1e99 }, { catchSource: 'wrist' }])
       expect((await coach.mutate('patch', `/api/strokes/${id}`).send(body)).status).toBe(400);
   });
 });

@@ -11,6 +11,7 @@ import { strokes } from '@stillstroke/db/schema/film';
 import { and, eq } from 'drizzle-orm';
 import type { ClipRow } from '../clips/clip-answer';
 import { strokeRows } from '../measures/clip-reading';
+import { refreshCoordination } from '../measures/coordination-figures';
 import { refreshStrokeFigures } from '../measures/figures';
 import type { AppContext } from '../platform/context';
 import { changedMeanwhile, HttpProblem, notFound } from '../platform/problem';
@@ -36,7 +37,14 @@ export function createStroke(
 ): Stroke {
   const { clip } = liveClip(db, user, clipId);
   const { id = randomUUID(), ...wanted } = body;
-  const fields = { ...wanted, nextEntry: wanted.nextEntry ?? null };
+  const fields: Fields = {
+    ...wanted,
+    nextEntry: wanted.nextEntry ?? null,
+    entrySource: wanted.entrySource ?? 'hand-seen',
+    catchSource: wanted.catchSource ?? 'hand-seen',
+    exitSource: wanted.exitSource ?? 'hand-seen',
+    nextEntrySource: wanted.nextEntrySource ?? 'hand-seen',
+  };
   return db.transaction(
     (tx) => {
       const there = tx.select().from(strokes).where(eq(strokes.id, id)).get();
@@ -97,8 +105,14 @@ export function updateStroke(
 
 /** Takes a stroke away; its marks stay. */
 export function deleteStroke({ db }: Context, user: SignedInUser, strokeId: string): void {
-  strokeInReach(db, user, strokeId);
-  db.delete(strokes).where(eq(strokes.id, strokeId)).run();
+  const { clip } = strokeInReach(db, user, strokeId);
+  db.transaction(
+    (tx) => {
+      tx.delete(strokes).where(eq(strokes.id, strokeId)).run();
+      refreshCoordination(tx, clip.id);
+    },
+    { behavior: 'immediate' },
+  );
 }
 
 function strokeInReach(db: Db, user: SignedInUser, strokeId: string): { clip: ClipRow } {

@@ -31,7 +31,9 @@ describe('strokes', () => {
     const first = (await add()).body as Stroke;
     const listed = (await coach.get(path)).body as { items: Stroke[] };
     expect(listed.items).toEqual([first, later, right]);
-    expect(first).toEqual({ ...events, id: first.id, clipId, version: 1 });
+    const seen = 'hand-seen';
+    const sources = { entrySource: seen, catchSource: seen, exitSource: seen, nextEntrySource: seen };
+    expect(first).toEqual({ ...events, ...sources, id: first.id, clipId, version: 1 });
   });
 
   it('have their events in order, within the clip', async () => {

@@ -13,13 +13,21 @@ const DAY_MS = 86_400_000;
 /** Slopes are told per this many days. */
 const SLOPE_DAYS = 30;
 
+/** One value of the sample: a stroke of an arm, or a passage of both. */
+export interface TrendFigure extends Pick<
+  KeptFigure,
+  'sessionId' | 'date' | 'view' | 'clipId' | 'value' | 'uncertainty' | 'setUp' | 'frame'
+> {
+  readonly arm: Arm;
+}
+
 interface MeasuredSession {
   readonly point: TrendPoint;
   readonly mean: SessionMean;
 }
 
 /** One arm over the sessions: figures of one measure and one view, by date. */
-export function armTrend(arm: Arm, figures: readonly KeptFigure[]): ArmTrend {
+export function armTrend(arm: Arm, figures: readonly TrendFigure[]): ArmTrend {
   const ofArm = figures.filter((figure) => figure.arm === arm);
   const sessions = [...grouped(ofArm, ({ sessionId }) => sessionId).values()].flatMap((of) =>
     measuredSession(arm, of),
@@ -32,7 +40,7 @@ export function armTrend(arm: Arm, figures: readonly KeptFigure[]): ArmTrend {
   };
 }
 
-function measuredSession(arm: Arm, figures: readonly KeptFigure[]): MeasuredSession[] {
+function measuredSession(arm: Arm, figures: readonly TrendFigure[]): MeasuredSession[] {
   const [first] = figures;
   const mean = sessionMean(
     figures.map(({ value }) => value),

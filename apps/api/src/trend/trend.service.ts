@@ -1,17 +1,18 @@
 import type { SignedInUser } from '@stillstroke/contract/auth';
 import type { StrokeKind } from '@stillstroke/contract/clip-facts';
 import type { QueryOf } from '@stillstroke/contract/endpoint';
-import type { getTrend as trendCall, Trend } from '@stillstroke/contract/trend';
+import type { getTrend as trendCall, Trend, TrendMeasure } from '@stillstroke/contract/trend';
 import type { Db } from '@stillstroke/db/open';
 import { clips, sessions, strokeFigures } from '@stillstroke/db/schema/film';
 import { and, asc, eq, isNull, sql } from 'drizzle-orm';
 import { comparedView, sideViews } from '../measures/compared-view';
 import { keptCautions } from '../measures/kept-cautions';
-import { keptFigures, type KeptFigure } from '../measures/kept-figures';
+import { keptFigures } from '../measures/kept-figures';
 import { unitOf } from '../measures/units';
 import type { AppContext } from '../platform/context';
 import { athleteInReach } from '../reach/reach';
-import { armTrend } from './arm-trend';
+import { armTrend, type TrendFigure } from './arm-trend';
+import { coordinationOver, measuredOf } from './trend-figures';
 
 /**
  * One measure over an athlete's sessions, each arm, of one view and one stroke kind: they are never mixed. What else there
@@ -24,18 +25,23 @@ export function getTrend(
   { measure, view: wished, stroke }: QueryOf<typeof trendCall>,
 ): Trend {
   const athlete = athleteInReach(db, user, athleteId);
-  const of = sql`${eq(sessions.athleteId, athlete.id)} and ${eq(strokeFigures.measure, measure)}`;
-  const figures = keptFigures(db, of, stroke);
+  const figures = figuresOver(db, athlete.id, measure, stroke);
   const view = wished ?? comparedView(figures.map((figure) => figure.view)) ?? 'side-underwater';
   const taken = figures.filter((figure) => figure.view === view);
   return {
     athleteId: athlete.id,
     measure,
-    unit: unitOf[measure],
+    unit: measure === 'coordination' ? 'share' : unitOf[measure],
+    measured: measuredOf(db, athlete.id, stroke),
     view,
     stroke,
-    series: seriesOf({ [stroke]: figures, [otherKind(stroke)]: keptFigures(db, of, otherKind(stroke)) }),
-    arms: [armTrend('left', taken), armTrend('right', taken)],
+    series: seriesOf({
+      [stroke]: figures,
+      [otherKind(stroke)]: figuresOver(db, athlete.id, measure, otherKind(stroke)),
+    }),
+    arms: (measure === 'coordination' ? (['both'] as const) : (['left', 'right'] as const)).map((arm) =>
+      armTrend(arm, taken),
+    ),
     cautions: keptCautions(
       db,
       sql`${eq(sessions.athleteId, athlete.id)} and ${eq(clips.view, view)} and ${eq(clips.stroke, stroke)}`,
@@ -48,7 +54,7 @@ export function getTrend(
 const otherKind = (kind: StrokeKind): StrokeKind => (kind === 'full' ? 'drill' : 'full');
 
 /** Views and stroke kinds that have figures, with how many sessions each. */
-function seriesOf(figures: Partial<Record<StrokeKind, readonly KeptFigure[]>>): Trend['series'] {
+function seriesOf(figures: Partial<Record<StrokeKind, readonly TrendFigure[]>>): Trend['series'] {
   return (['full', 'drill'] as const).flatMap((stroke) =>
     sideViews.flatMap((view) => {
       const own = (figures[stroke] ?? []).filter((figure) => figure.view === view);
@@ -56,6 +62,12 @@ function seriesOf(figures: Partial<Record<StrokeKind, readonly KeptFigure[]>>): 
       return count === 0 ? [] : [{ view, stroke, sessions: count }];
     }),
   );
+}
+
+function figuresOver(db: Db, athleteId: string, measure: TrendMeasure, kind: StrokeKind): TrendFigure[] {
+  const own = eq(sessions.athleteId, athleteId);
+  if (measure === 'coordination') return coordinationOver(db, own, kind);
+  return keptFigures(db, sql`${own} and ${eq(strokeFigures.measure, measure)}`, kind);
 }
 
 /** Sessions without a point, and why. */

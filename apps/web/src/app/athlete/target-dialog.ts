@@ -32,6 +32,8 @@ const unitLabels: Readonly<Record<string, string>> = {
   share: 'percent',
   deg: 'degrees',
   perMinute: 'a minute',
+  m: 'metres',
+  m2PerS: 'm²/s',
 };
 /** Where coaches often want the forearm vertical; no published source is known. */
 const firstThird = {

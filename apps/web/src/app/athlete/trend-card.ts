@@ -38,7 +38,7 @@ export class TrendCard {
   protected readonly latest = computed(() =>
     (this.trend()?.arms ?? []).flatMap(({ arm, points }) => {
       const point = points.at(-1);
-      if (!point) return [];
+      if (!point || arm === 'both') return [];
       const [place] = point.frames;
       return {
         arm,

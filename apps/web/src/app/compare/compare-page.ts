@@ -19,6 +19,7 @@ import { CautionLine } from '../ui/caution-line';
 import { ProblemMessage } from '../ui/problem-message';
 import { BreathRows } from './breath-rows';
 import { sayComparison } from './comparison-sentence';
+import { BothArms } from './both-arms';
 import { MeasureRows } from './measure-rows';
 import { PullCurves } from './pull-curves';
 import { PullStill } from './pull-still';
@@ -37,6 +38,7 @@ const leftOutWords = {
   imports: [
     CautionLine,
     BreathRows,
+    BothArms,
     DatePipe,
     MatSliderModule,
     MatTabsModule,

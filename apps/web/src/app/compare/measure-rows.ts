@@ -2,21 +2,22 @@ import { ChangeDetectionStrategy, Component, computed, inject, input } from '@an
 import { RouterLink } from '@angular/router';
 import type { MeasureComparison, Sample } from '@stillstroke/contract/comparison';
 import { getStrokeExplanation } from '@stillstroke/contract/explanation';
-import type { Measure } from '@stillstroke/contract/measures';
+import type { Measure, Unit } from '@stillstroke/contract/measures';
 import type { Target } from '@stillstroke/contract/targets';
 import { firstValueFrom } from 'rxjs';
 import { Api } from '../core/api/api';
 import { explainMeasure } from '../ui/explain/explain-measure';
 import type { Explain } from '../ui/explain/explanation';
 import { How } from '../ui/explain/how';
-import { formatFigure, onScreen } from '../ui/figure/format-figure';
+import { formatFigure, onScreen, signOf } from '../ui/figure/format-figure';
 import { measureWords } from '../ui/figure/measure-words';
 import { ArmRail, type RailBand, type RailValue } from '../ui/rail/arm-rail';
 import { bandOn, sayTargets } from './target-rows';
 import { sayVerdict } from './comparison-sentence';
 import { explainDifference } from './explain-difference';
 
-const suffixes = { share: ' %', deg: '°', perMinute: '' } as const;
+/** Distance between round numbers on a rail. */
+const steps: Readonly<Record<Unit, number>> = { share: 10, deg: 20, perMinute: 10, m: 0.5, m2PerS: 0.5 };
 
 /** One row a measure: its name, left and right on a rail, and the verdict in words with its strokes behind it. */
 @Component({
@@ -35,37 +36,43 @@ export class MeasureRows {
   readonly targets = input<readonly Target[]>([]);
 
   protected readonly shown = computed(() =>
-    this.rows().map((row) => {
-      const [left, right] = [railValue(row, 'left'), railValue(row, 'right')];
-      const [leftBand, rightBand] = [
-        bandOn(this.targets(), row, 'left'),
-        bandOn(this.targets(), row, 'right'),
-      ];
-      const against = sayTargets(this.targets(), row);
-      return {
-        row,
-        words: measureWords[row.measure],
-        left,
-        right,
-        leftBand,
-        rightBand,
-        against,
-        domain: domainOf(
-          [left, right],
-          [leftBand, rightBand],
-          row.unit === 'deg' ? 20 : 10,
-          row.measure === 'elbowAtMidPull' ? 180 : Infinity,
-        ),
-        suffix: suffixes[row.unit],
-        said: sayVerdict(row),
-        settled: row.verdict === 'left-larger' || row.verdict === 'right-larger',
-        label: `${measureWords[row.measure].name}: left ${sayMean(row, 'left')}, right ${sayMean(row, 'right')}${against.map(({ text }) => `. ${text}`).join('')}`,
-        samples: (['left', 'right'] as const).flatMap((arm) =>
-          row[arm].samples.map((sample) => ({ arm, ...sample, explain: this.explain(sample, row.measure) })),
-        ),
-        explain: () => explainDifference(row),
-      };
-    }),
+    this.rows()
+      .filter(isShown)
+      .map((row) => {
+        const [left, right] = [railValue(row, 'left'), railValue(row, 'right')];
+        const [leftBand, rightBand] = [
+          bandOn(this.targets(), row, 'left'),
+          bandOn(this.targets(), row, 'right'),
+        ];
+        const against = sayTargets(this.targets(), row);
+        return {
+          row,
+          words: measureWords[row.measure],
+          left,
+          right,
+          leftBand,
+          rightBand,
+          against,
+          domain: domainOf(
+            [left, right],
+            [leftBand, rightBand],
+            steps[row.unit],
+            row.measure === 'elbowAtMidPull' ? 180 : Infinity,
+          ),
+          suffix: row.unit === 'perMinute' ? '' : signOf[row.unit],
+          said: sayVerdict(row),
+          settled: row.verdict === 'left-larger' || row.verdict === 'right-larger',
+          label: `${measureWords[row.measure].name}: left ${sayMean(row, 'left')}, right ${sayMean(row, 'right')}${against.map(({ text }) => `. ${text}`).join('')}`,
+          samples: (['left', 'right'] as const).flatMap((arm) =>
+            row[arm].samples.map((sample) => ({
+              arm,
+              ...sample,
+              explain: this.explain(sample, row.measure),
+            })),
+          ),
+          explain: () => explainDifference(row),
+        };
+      }),
   );
 
   protected readonly format = formatFigure;
@@ -78,6 +85,12 @@ export class MeasureRows {
         ),
       );
   }
+}
+
+/** Length and index are listed once a distance makes them, the others always, so that one sees what could be measured. */
+function isShown({ measure, left, right }: MeasureComparison): boolean {
+  const needsDistance = measure === 'strokeLength' || measure === 'strokeIndex';
+  return !needsDistance || left.count + right.count > 0;
 }
 
 function railValue(row: MeasureComparison, arm: 'left' | 'right'): RailValue | null {

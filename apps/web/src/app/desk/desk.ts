@@ -21,6 +21,7 @@ import { DeskExplainer } from './readings/desk-explainer';
 import { HandReadings } from './readings/hand-readings';
 import { Readings } from './readings/readings';
 import { TargetLines } from './readings/target-lines';
+import { TimingReadings } from './readings/timing-readings';
 import { DeskSaving } from './saving/desk-saving';
 import { ScalePanel } from './scale/scale-panel';
 import { FieldOfView } from './set-up/field-of-view';
@@ -64,6 +65,7 @@ const FRAME_SAID_AFTER_MS = 500;
     Strip,
     StrokesPanel,
     TargetLines,
+    TimingReadings,
     Transport,
   ],
   providers: [DeskKeyboard],

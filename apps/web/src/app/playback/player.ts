@@ -19,8 +19,8 @@ export const displayClock: PlayerClock = {
   },
 };
 
-/** Share of the clip's own speed. */
-export type PlaySpeed = 1 | 0.5 | 0.25 | 0.125;
+/** Share of the file's own speed, above 0. */
+export type PlaySpeed = number;
 
 /** What happens while playing. Pictures are handed over: the receiver closes them. */
 export interface PlayerEvents {
@@ -57,7 +57,7 @@ export class Player {
    *
    * @param from frame on screen
    * @param direction 1 forward, −1 back
-   * @param speed share of the clip's own speed; `captureRateFactor` is the caller's to divide by
+   * @param speed share of the file's own speed
    */
   play(from: number, direction: 1 | -1, speed: PlaySpeed): void {
     this.run?.end('stop');

@@ -19,6 +19,7 @@ const setUpWords: Readonly<Record<string, string>> = {
   stroke: 'kind of stroke',
   captureRateFactor: 'capture rate factor',
   plumb: 'plumb',
+  distance: 'distance swum',
 };
 
 export function saySetUp(fields: readonly string[]): string {

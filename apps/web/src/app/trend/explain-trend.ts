@@ -8,14 +8,15 @@ import {
   formatRange,
   formatUncertainty,
   onScreen,
+  differenceSignOf,
 } from '../ui/figure/format-figure';
-import { measureWords } from '../ui/figure/measure-words';
+import { nameOf } from '../ui/figure/measure-words';
 import { sayDay } from './say-day';
 
 type ArmTrend = Trend['arms'][number];
 type Unit = Trend['unit'];
 
-const armWords = { left: 'left arm', right: 'right arm' } as const;
+const armWords = { left: 'left arm', right: 'right arm', both: 'both arms' } as const;
 export const changeWords = {
   changed: 'Changed',
   'not-more-than-marking': 'Not more than marking could produce',
@@ -28,7 +29,7 @@ export function explainPoint(trend: Trend, point: TrendPoint): Explanation {
   const { unit, measure } = trend;
   return {
     entry: 'sessionMean',
-    of: `${measureWords[measure].name}, ${armWords[point.arm]}, ${sayDay(point.date)}`,
+    of: `${nameOf(measure)}, ${armWords[point.arm]}, ${sayDay(point.date)}`,
     result: `${formatFigure(point.mean, unit, point.uncertainty)} ${formatUncertainty(point.uncertainty, unit)}`,
     interval: null,
     inputs: [
@@ -53,7 +54,7 @@ export function explainChange(trend: Trend, arm: ArmTrend): Explanation {
   const [first, last] = [arm.points[0], arm.points.at(-1)];
   return {
     entry: 'change',
-    of: `${measureWords[measure].name}, ${armWords[arm.arm]}: last session less first`,
+    of: `${nameOf(measure)}, ${armWords[arm.arm]}: last session less first`,
     result: changeWords[arm.verdict],
     interval: arm.interval && formatRange(arm.interval, unit, 'difference'),
     inputs: [
@@ -94,10 +95,10 @@ export function explainSlope(trend: Trend, arm: ArmTrend): Explanation | null {
   const { slope, points } = arm;
   if (!slope) return null;
   const { unit, measure } = trend;
-  const per = (value: number) => `${fixed(onScreen(value, unit), 2)}${unitSign[unit]} per 30 days`;
+  const per = (value: number) => `${fixed(onScreen(value, unit), 2)}${differenceSignOf[unit]} per 30 days`;
   return {
     entry: 'slope',
-    of: `${measureWords[measure].name}, ${armWords[arm.arm]}, over ${points.length} sessions`,
+    of: `${nameOf(measure)}, ${armWords[arm.arm]}, over ${points.length} sessions`,
     result: per(slope.value),
     interval: `${fixed(onScreen(slope.low, unit), 2)} to ${fixed(onScreen(slope.high, unit), 2)}`,
     inputs: [
@@ -115,8 +116,6 @@ export function explainSlope(trend: Trend, arm: ArmTrend): Explanation | null {
   };
 }
 
-const unitSign = { share: ' points', deg: '°', perMinute: ' a minute' } as const;
-
 function sayWelch({ welch }: ArmTrend, unit: Unit): ExplainedInput[] {
   if (!welch) return [];
   return [
@@ -130,15 +129,20 @@ function sayPoint(name: string, point: TrendPoint, unit: Unit): ExplainedInput {
   const figure = `${formatFigure(point.mean, unit, point.uncertainty)} ${formatUncertainty(point.uncertainty, unit)}`;
   return {
     name,
-    value: `${figure}, ${point.count} ${point.count === 1 ? 'stroke' : 'strokes'}, of it marking ${sayAlone(point.marking, unit)}`,
+    value: `${figure}, ${point.count} ${countWords(point)}, of it marking ${sayAlone(point.marking, unit)}`,
   };
+}
+
+function countWords({ arm, count }: TrendPoint): string {
+  const one = arm === 'both' ? 'passage' : 'stroke';
+  return count === 1 ? one : `${one}s`;
 }
 
 function framesOf(point: TrendPoint): ExplainedFrame[] {
   return point.frames.map(({ clipId, frame }) => ({
     clipId,
     frame,
-    arm: point.arm,
+    arm: point.arm === 'both' ? null : point.arm,
     says: `${sayDay(point.date)}, frame ${frame}`,
   }));
 }

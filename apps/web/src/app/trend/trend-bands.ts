@@ -24,7 +24,7 @@ export function trendBands(targets: readonly Target[], { measure, unit, arms }: 
     .map((target) => {
       const latest = arms.flatMap(({ arm, points }) => {
         const point = points.at(-1);
-        if (!point || targetFor(targets, measure, arm) !== target) return [];
+        if (!point || arm === 'both' || targetFor(targets, target.measure, arm) !== target) return [];
         const found = figureAgainstBand(point.mean, point.uncertainty, target);
         return found.ok ? [`${arm} ${sayRelation(found.value, unit, point.uncertainty)}`] : [];
       });

@@ -4,7 +4,7 @@ import type { Target } from '@stillstroke/contract/targets';
 import type { Trend, TrendPoint } from '@stillstroke/contract/trend';
 import { scaleLinear, scaleUtc } from 'd3-scale';
 import { line } from 'd3-shape';
-import { formatFigure, formatUncertainty, onScreen } from '../ui/figure/format-figure';
+import { formatFigure, formatUncertainty, onScreen, signOf, type Unit } from '../ui/figure/format-figure';
 import { trendBands } from './trend-bands';
 import { sayDay } from './say-day';
 
@@ -105,16 +105,16 @@ export class TrendChart {
       high: y(point.mean + spread),
       low: y(point.mean - spread),
       link: place ? ['/clips', place.clipId] : ['/sessions', point.sessionId],
-      query: place ? { frame: place.frame, arm: point.arm } : {},
+      query: place ? { frame: place.frame, ...(point.arm !== 'both' && { arm: point.arm }) } : {},
       label:
-        `${sayDay(point.date)}, ${point.arm} arm: ${formatFigure(point.mean, unit, point.uncertainty)} ` +
-        `${formatUncertainty(point.uncertainty, unit)} over ${point.count} strokes`,
+        `${sayDay(point.date)}, ${point.arm === 'both' ? 'both arms' : `${point.arm} arm`}: ${formatFigure(point.mean, unit, point.uncertainty)} ` +
+        `${formatUncertainty(point.uncertainty, unit)} over ${point.count} ${point.arm === 'both' ? 'passages' : 'strokes'}`,
     };
   }
 }
 
 const timeOf = ({ date }: { date: string }) => Date.parse(date);
 
-function formatTick(value: number, unit: 'share' | 'deg' | 'perMinute'): string {
-  return `${String(value).replace('-', '−')}${unit === 'share' ? ' %' : unit === 'deg' ? '°' : ''}`;
+function formatTick(value: number, unit: Unit): string {
+  return `${String(value).replace('-', '−')}${unit === 'perMinute' ? '' : signOf[unit]}`;
 }

@@ -4,9 +4,8 @@ import { MatFormFieldModule } from '@angular/material/form-field';
 import { MatSelectModule } from '@angular/material/select';
 import { Router, RouterLink } from '@angular/router';
 import { getAthlete } from '@stillstroke/contract/athletes';
-import { measureSchema, type Measure } from '@stillstroke/contract/measures';
 import { strokeKindSchema } from '@stillstroke/contract/clip-facts';
-import { getTrend, sideViewSchema } from '@stillstroke/contract/trend';
+import { getTrend, sideViewSchema, trendMeasureSchema, type TrendMeasure } from '@stillstroke/contract/trend';
 import { listTargets } from '@stillstroke/contract/targets';
 import { apiResource } from '../core/api/api';
 import {
@@ -18,7 +17,7 @@ import {
   onScreen,
 } from '../ui/figure/format-figure';
 import { How } from '../ui/explain/how';
-import { measuresInOrder, measureWords, sayMoved } from '../ui/figure/measure-words';
+import { measuresInOrder, nameOf, sayMoved } from '../ui/figure/measure-words';
 import { CautionLine } from '../ui/caution-line';
 import { ProblemMessage } from '../ui/problem-message';
 import { changeWords, explainChange, explainPoint, explainSlope } from './explain-trend';
@@ -61,9 +60,10 @@ export class TrendPage {
   readonly view = input<string>();
   readonly stroke = input<string>();
 
-  protected readonly chosen = computed<Measure>(
-    () => measureSchema.safeParse(this.measure()).data ?? 'verticalAt',
+  protected readonly chosen = computed<TrendMeasure>(
+    () => trendMeasureSchema.safeParse(this.measure()).data ?? 'verticalAt',
   );
+  protected readonly armWords = { left: 'Left', right: 'Right', both: 'Both arms' } as const;
   protected readonly athlete = apiResource(getAthlete, () => ({ params: { id: this.athleteId() } }));
   protected readonly trend = apiResource(getTrend, () => ({
     params: { id: this.athleteId() },
@@ -77,11 +77,14 @@ export class TrendPage {
   protected readonly targets = computed(() =>
     this.readTargets.hasValue() ? this.readTargets.value().items : [],
   );
-  protected readonly measures = measuresInOrder.map((measure) => ({
-    measure,
-    name: measureWords[measure].name,
-  }));
-  protected readonly words = computed(() => measureWords[this.chosen()]);
+  /** Those that some session has; the chosen one always, so that it is named. */
+  protected readonly measures = computed(() => {
+    const listed = new Set(this.shown()?.measured ?? measuresInOrder).add(this.chosen());
+    return [...measuresInOrder, 'coordination' as const]
+      .filter((measure) => listed.has(measure))
+      .map((measure) => ({ measure, name: nameOf(measure) }));
+  });
+  protected readonly words = computed(() => ({ name: nameOf(this.chosen()) }));
   protected readonly shown = computed(() => (this.trend.hasValue() ? this.trend.value() : null));
   protected readonly series = computed(() => {
     const trend = this.shown();
@@ -176,7 +179,7 @@ export class TrendPage {
       }));
   });
 
-  protected chooseMeasure(measure: Measure): void {
+  protected chooseMeasure(measure: TrendMeasure): void {
     void this.router.navigate([], {
       queryParams: { measure },
       queryParamsHandling: 'merge',
@@ -200,8 +203,15 @@ export class TrendPage {
 
   private signed(value: number): string {
     const shown = onScreen(value, this.shown()?.unit ?? 'deg');
-    return `${shown > 0.05 ? '+' : ''}${fixed(shown, 1)}`;
+    const places = this.shown()?.unit.startsWith('m') ? 2 : 1;
+    return `${shown > 0.05 ? '+' : ''}${fixed(shown, places)}`;
   }
 }
 
-const unitWords = { share: 'points', deg: 'degrees', perMinute: 'a minute' } as const;
+const unitWords = {
+  share: 'points',
+  deg: 'degrees',
+  perMinute: 'a minute',
+  m: 'm',
+  m2PerS: 'm²/s',
+} as const;

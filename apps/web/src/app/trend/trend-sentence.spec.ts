@@ -31,6 +31,7 @@ const trend = (arms: ArmTrend[], measure: Trend['measure'] = 'verticalAt'): Tren
   athleteId: id,
   measure,
   unit: measure === 'verticalAt' ? 'share' : 'deg',
+  measured: [measure],
   view: 'side-underwater',
   stroke: 'full',
   series: [{ view: 'side-underwater', stroke: 'full', sessions: 2 }],
@@ -63,6 +64,12 @@ describe('the sentence of a trend', () => {
   it('has a word for each direction of each measure', () => {
     expect(sayTrend(trend([arm('right', { change: 7 })], 'peakDrop'))).toContain('drops 7° more');
     expect(sayTrend(trend([arm('right', { change: -7 })], 'peakDrop'))).toContain('drops 7° less');
+  });
+
+  it('says of both arms together what moved', () => {
+    const both = arm('left', { arm: 'both', change: 0.03, detectable: 0.01 });
+    const said = sayTrend({ ...trend([both], 'coordination'), unit: 'share' });
+    expect(said).toContain('Both arms 3 points less gap since July');
   });
 
   it('claims nothing from one session or none', () => {

@@ -1,5 +1,5 @@
 import type { Trend } from '@stillstroke/contract/trend';
-import { formatDifference, unitOf } from '../ui/figure/format-figure';
+import { formatDifference } from '../ui/figure/format-figure';
 import { sayMoved } from '../ui/figure/measure-words';
 
 type ArmTrend = Trend['arms'][number];
@@ -12,18 +12,20 @@ export function sayTrend(trend: Trend): string {
   return sentences.length > 0 ? sentences.join(' ') : 'No session with this measure yet.';
 }
 
-function sayArm(arm: ArmTrend, { measure }: Trend): string {
-  const name = arm.arm === 'left' ? 'Left arm' : 'Right arm';
+function sayArm(arm: ArmTrend, { measure, unit }: Trend): string {
+  const name = names[arm.arm];
   const first = arm.points[0];
   if (!first) return `${name} not measured.`;
   if (arm.change === null) return `${name} measured in one session so far.`;
   if (arm.verdict === 'too-few') return `${name} measured on too few strokes to say whether it moved.`;
   if (arm.verdict !== 'changed') {
-    const amount = formatDifference(arm.change, unitOf[measure]);
+    const amount = formatDifference(arm.change, unit);
     return `${name} ${amount} from the first session: ${notMoreThan[arm.verdict]}.`;
   }
   return `${name} ${sayMoved(measure, arm.change)} since ${monthOf(first.date)}: more than marking could produce.`;
 }
+
+const names = { left: 'Left arm', right: 'Right arm', both: 'Both arms' } as const;
 
 const notMoreThan = {
   'not-more-than-marking': 'not more than marking could produce',

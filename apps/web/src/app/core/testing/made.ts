@@ -26,6 +26,7 @@ export function madeClip(more: Partial<Clip> = {}): Clip {
     captureRateFactor: 1,
     fieldOfView: null,
     plumb: null,
+    distance: null,
     status: 'ready',
     width: 1920,
     height: 1080,

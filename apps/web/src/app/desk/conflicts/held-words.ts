@@ -1,3 +1,4 @@
+import { sourceOf } from '@stillstroke/geometry/events/event-moment';
 import { formatFigure } from '../../ui/figure/format-figure';
 import type { Held } from '../saving/outbox';
 import type { Wanted } from '../saving/pending-change';
@@ -21,6 +22,8 @@ export function nameHeld({ change: { wanted } }: Held, state: DeskState): string
       return 'The plumb';
     case 'scale':
       return 'The scale';
+    case 'distance':
+      return 'The known distance';
     case 'facts':
       return 'The set-up';
   }
@@ -35,13 +38,20 @@ export function sayVersion(wanted: Wanted, state: DeskState): string {
       const { stroke } = wanted;
       if (!stroke) return 'removed';
       const set = eventsInOrder.filter((event) => stroke[event] !== null);
-      const events = set.map((event) => `${eventWords[event]} ${stroke[event]}`).join(', ');
+      const events = set
+        .map(
+          (event) =>
+            `${eventWords[event]} ${stroke[event]}${sourceOf(stroke, event) === 'wrist-proxy' ? ' by the wrist' : ''}`,
+        )
+        .join(', ');
       return `${events}${stroke.breath ? ', breathing' : ''}`;
     }
     case 'plumb':
       return wanted.plumb ? 'drawn' : 'taken away';
     case 'scale':
       return sayScale(wanted.scale);
+    case 'distance':
+      return wanted.distance ? `${wanted.distance.metres} m` : 'taken away';
     case 'facts':
       return Object.entries(wanted.facts)
         .map(([name, value]) => sayFact(name as keyof ClipFacts, value))

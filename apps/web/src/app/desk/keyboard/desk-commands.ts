@@ -71,6 +71,7 @@ const commands: Readonly<Record<KeyCommand, Command>> = {
   'set-exit': setEvent('exit'),
   'set-next-entry': setEvent('nextEntry'),
   'toggle-breath': ({ state }) => void state.events.toggleBreath(),
+  'toggle-source': ({ state }) => void state.events.toggleSourceHere(),
   'draw-plumb': ({ state }) =>
     state.setUp.drawingPlumb() ? state.setUp.stopPlumb() : state.setUp.startPlumb(),
   undo: ({ state }) => void state.undo(),

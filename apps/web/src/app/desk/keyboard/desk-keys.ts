@@ -32,6 +32,7 @@ export type KeyCommand =
   | 'set-exit'
   | 'set-next-entry'
   | 'toggle-breath'
+  | 'toggle-source'
   | 'draw-plumb'
   | 'undo'
   | 'redo'
@@ -196,6 +197,11 @@ export const keyGroups: readonly KeyGroup[] = [
       {
         says: 'Breath on this stroke, yes or no',
         presses: [{ key: 'b', command: 'toggle-breath' }],
+        edits: true,
+      },
+      {
+        says: 'Event on this frame: hand seen, or the wrist stands in',
+        presses: [{ key: 'w', command: 'toggle-source' }],
         edits: true,
       },
     ],

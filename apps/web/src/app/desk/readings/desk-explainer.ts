@@ -57,7 +57,7 @@ export class DeskExplainer {
     if (!stroke || !isWhole(stroke) || !measures) return null;
     const [clip, times] = [this.state.clip(), this.state.frameTimesUs()];
     const context = this.state.readings.context();
-    const measured = measuredByName(measure, stroke, measures, times);
+    const measured = measuredByName(measure, measures);
     const frames = measured.ok ? measured.value.frames : [];
     const events = (['entry', 'catch', 'exit', 'nextEntry'] as const).flatMap((event) => {
       const frame = stroke[event];

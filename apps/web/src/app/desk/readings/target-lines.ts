@@ -57,7 +57,7 @@ export class TargetLines {
     const stroke = state.currentStroke();
     const measures = stroke && state.readings.measures().get(stroke.id);
     if (!stroke || !isWhole(stroke) || !measures) return 'no stroke of this arm here';
-    const measured = measuredByName(measure, stroke, measures, state.frameTimesUs());
+    const measured = measuredByName(measure, measures);
     if (!measured.ok) return 'not measured on this stroke';
     const { value, uncertainty, interval } = measured.value;
     const relation = relationToBand(value, interval, band);

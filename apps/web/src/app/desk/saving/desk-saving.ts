@@ -148,6 +148,8 @@ export function changeTo(desk: DeskState, wanted: Wanted): DeskChange {
       return { kind: 'plumb', before: desk.plumb(), after: wanted.plumb };
     case 'scale':
       return { kind: 'scale', before: desk.scale.stored(), after: wanted.scale };
+    case 'distance':
+      return { kind: 'distance', before: desk.setUp.distance(), after: wanted.distance };
     case 'facts': {
       const before = desk.setUp.facts();
       return { kind: 'facts', before, after: { ...before, ...wanted.facts } };

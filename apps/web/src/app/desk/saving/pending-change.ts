@@ -1,4 +1,4 @@
-import type { Plumb } from '@stillstroke/contract/clip-facts';
+import type { KnownDistance, Plumb } from '@stillstroke/contract/clip-facts';
 import type { Scale } from '@stillstroke/contract/scale';
 import type { Arm } from '@stillstroke/contract/strokes';
 import type { ClipFacts, DeskChange } from '../state/desk-change';
@@ -12,6 +12,7 @@ export type Wanted =
   | { readonly kind: 'stroke'; readonly id: string; readonly stroke: DeskStroke | null }
   | { readonly kind: 'plumb'; readonly plumb: Plumb | null }
   | { readonly kind: 'scale'; readonly scale: Scale | null }
+  | { readonly kind: 'distance'; readonly distance: KnownDistance | null }
   /** Only what was changed, so that another's change of another fact stays. */
   | { readonly kind: 'facts'; readonly facts: Partial<ClipFacts> };
 
@@ -53,6 +54,8 @@ export function wantedOf(change: DeskChange): Wanted {
       return { kind: 'plumb', plumb: change.after };
     case 'scale':
       return { kind: 'scale', scale: change.after };
+    case 'distance':
+      return { kind: 'distance', distance: change.after };
     case 'facts':
       return { kind: 'facts', facts: differing(change.before, change.after) };
   }

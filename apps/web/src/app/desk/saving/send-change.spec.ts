@@ -5,6 +5,7 @@ import type { SavedMark } from '@stillstroke/contract/marks';
 import type { Scale } from '@stillstroke/contract/scale';
 import { beforeEach, describe, expect, it } from 'vitest';
 import { Api } from '../../core/api/api';
+import { sourcesOf } from '../state/desk-stroke';
 import { markWith, testClip, testStrokes } from '../state/testing';
 import type { PendingChange, Wanted } from './pending-change';
 import { ChangeSender } from './send-change';
@@ -99,10 +100,32 @@ describe('ChangeSender', () => {
     const stroke = testStrokes[0];
     if (!stroke) throw new Error('no stroke');
     const result = sender.send(pending({ kind: 'stroke', id: stroke.id, stroke }, 1));
-    const current = { ...stroke, clipId: testClip.id, version: 2 };
+    const current = { ...stroke, ...sourcesOf(stroke), clipId: testClip.id, version: 2 };
     const request = http.expectOne({ method: 'PATCH', url: `/api/strokes/${stroke.id}` });
     request.flush(problem(409, 'changed-meanwhile', current), { status: 409, statusText: 'Conflict' });
     expect(await result).toEqual({ kind: 'done', version: 2 });
+  });
+
+  it('puts a known distance, and reads what is there', async () => {
+    const distance = { metres: 5, uncertaintyM: 0.05, fromFrame: 3, toFrame: 90 };
+    const result = sender.send(pending({ kind: 'distance', distance }, 1));
+    const request = http.expectOne({ method: 'PUT', url: `/api/clips/${testClip.id}/distance` });
+    expect(request.request.body).toEqual({ distance });
+    request.flush({ ...testClip, distance });
+    expect(await result).toEqual({ kind: 'done', version: 1 });
+    const theirs = sender.fetchTheirs({ kind: 'distance', distance: null });
+    http.expectOne(`/api/clips/${testClip.id}`).flush({ ...testClip, distance });
+    expect(await theirs).toEqual({ wanted: { kind: 'distance', distance }, version: 1 });
+  });
+
+  it('says of a stroke what its events were chosen by', () => {
+    const stroke = testStrokes[0];
+    if (!stroke) throw new Error('no stroke');
+    void sender.send(
+      pending({ kind: 'stroke', id: stroke.id, stroke: { ...stroke, exitSource: 'wrist-proxy' } }, 1),
+    );
+    const request = http.expectOne({ method: 'PATCH', url: `/api/strokes/${stroke.id}` });
+    expect(request.request.body).toMatchObject({ entrySource: 'hand-seen', exitSource: 'wrist-proxy' });
   });
 
   it('creates a stroke the server does not have under the id chosen here', () => {

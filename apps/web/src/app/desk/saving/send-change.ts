@@ -1,7 +1,7 @@
 import type { Api } from '../../core/api/api';
 import { problemOf } from '../../core/api/problem-of';
 import type { Clip } from '@stillstroke/contract/clip-facts';
-import { getClip, putCalibration, updateClip } from '@stillstroke/contract/clips';
+import { getClip, putCalibration, putDistance, updateClip } from '@stillstroke/contract/clips';
 import { clipScaleSchema, deleteScale, getScale, putScale, type Scale } from '@stillstroke/contract/scale';
 import { deleteMark, listMarks, markSchema, putMark } from '@stillstroke/contract/marks';
 import {
@@ -13,7 +13,7 @@ import {
 } from '@stillstroke/contract/strokes';
 import { firstValueFrom, timeout, type Observable } from 'rxjs';
 import { isComplete } from '../state/desk-mark';
-import { deskStrokeOf, isWhole, type DeskStroke } from '../state/desk-stroke';
+import { deskStrokeOf, isWhole, sourcesOf, type DeskStroke } from '../state/desk-stroke';
 import { sameWanted, type PendingChange, type Wanted } from './pending-change';
 import type { StopReason } from './save-state';
 
@@ -72,6 +72,7 @@ export class ChangeSender {
       case 'scale':
         return theirScale(await answer(this.api.call(getScale, { params })));
       case 'plumb':
+      case 'distance':
       case 'facts':
         return theirClip(wanted, await answer(this.api.call(getClip, { params })));
     }
@@ -90,6 +91,9 @@ export class ChangeSender {
         return 1;
       case 'scale':
         return this.deliverScale(wanted.scale, base);
+      case 'distance':
+        await answer(this.api.call(putDistance, { params, body: { distance: wanted.distance } }));
+        return 1;
       case 'facts':
         await answer(this.api.call(updateClip, { params, body: wanted.facts }));
         return 1;
@@ -137,7 +141,7 @@ export class ChangeSender {
       return 0;
     }
     const { arm, entry, catch: caught, exit, nextEntry, breath } = stroke;
-    const events = { entry, catch: caught, exit, nextEntry, breath };
+    const events = { entry, catch: caught, exit, nextEntry, breath, ...sourcesOf(stroke) };
     const saved =
       base === 0
         ? this.api.call(createStroke, { params: { id: this.clipId }, body: { id, arm, ...events } })
@@ -215,8 +219,9 @@ function theirScale(there: ReturnType<typeof clipScaleSchema.parse> | undefined)
 }
 
 function theirClip(wanted: Wanted, clip: Clip): Theirs {
-  const { view, travel, stroke, captureRateFactor, fieldOfView, plumb } = clip;
+  const { view, travel, stroke, captureRateFactor, fieldOfView, plumb, distance } = clip;
   if (wanted.kind === 'plumb') return { wanted: { kind: 'plumb', plumb }, version: 1 };
+  if (wanted.kind === 'distance') return { wanted: { kind: 'distance', distance }, version: 1 };
   return {
     wanted: { kind: 'facts', facts: { view, travel, stroke, captureRateFactor, fieldOfView } },
     version: 1,

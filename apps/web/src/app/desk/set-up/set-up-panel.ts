@@ -3,12 +3,14 @@ import type { Travel, View } from '@stillstroke/contract/clip-facts';
 import { cameraRoll, type PlumbLine } from '@stillstroke/geometry/calibration/plumb';
 import { travelWords, viewWords } from '../clip-words';
 import type { DeskState } from '../state/desk-state';
+import { KnownDistancePart } from './known-distance';
 
 type Coordinate = readonly [end: 'top' | 'bottom', axis: 'x' | 'y'];
 
 /** View, travel, plumb and capture rate of the clip. Each is saved as it is set; all can be skipped. */
 @Component({
   selector: 'st-set-up-panel',
+  imports: [KnownDistancePart],
   templateUrl: './set-up-panel.html',
   styleUrl: './set-up-panel.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,

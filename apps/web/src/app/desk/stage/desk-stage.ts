@@ -24,6 +24,7 @@ export class DeskStage implements StageState {
   readonly timesUs: Signal<readonly number[]>;
   readonly picture: Signal<Size>;
   readonly play: StagePlay;
+  readonly captureRateFactor: Signal<number>;
   readonly frame: Signal<number>;
   readonly arm: Signal<ArmSide>;
   readonly joint: Signal<Joint>;
@@ -51,6 +52,7 @@ export class DeskStage implements StageState {
     [this.timesUs, this.plumb] = [desk.frameTimesUs, desk.plumb];
     this.task = computed(() => (upToDate() ? desk.task() : LOOK));
     [this.play, this.crosshairMoved] = [desk.play, desk.crosshair];
+    this.captureRateFactor = computed(() => desk.clip().captureRateFactor);
     this.crosshair = computed(() => desk.marking.crosshairOrMiddle());
     this.canEdit = computed(() => desk.canEdit && upToDate() && !desk.play.playing());
     this.sides = {

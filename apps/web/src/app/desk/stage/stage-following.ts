@@ -30,9 +30,11 @@ function followFrame(model: StageModel): void {
     onCleanup(() => player?.halt());
   });
   effect(() => {
-    const { play, frame } = model.desk();
+    const { play, frame, captureRateFactor } = model.desk();
     const direction = play.playing() ? play.direction() : 0;
-    const [speed, wanted, player, open] = [play.speed(), frame(), model.player(), model.open()];
+    // Speeds are the world's: film that plays a quarter as fast as the world moved has to play four times as fast.
+    const speed = play.speed() / captureRateFactor();
+    const [wanted, player, open] = [frame(), model.player(), model.open()];
     untracked(() => {
       player?.follow(direction, speed, wanted);
       open?.loader.want(wanted);

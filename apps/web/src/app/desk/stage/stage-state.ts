@@ -19,6 +19,7 @@ export interface StageArm {
 export interface StagePlay {
   readonly playing: Signal<boolean>;
   readonly direction: Signal<1 | -1>;
+  /** Share of the world's speed. */
   readonly speed: Signal<PlaySpeed>;
   /** Frames come later than they are due: the clip plays slower than asked, with no frame left out. */
   readonly behind: Signal<boolean>;
@@ -37,6 +38,8 @@ export interface StageState {
   readonly timesUs: Signal<readonly number[]>;
   readonly picture: Signal<Size>;
   readonly play: StagePlay;
+  /** World seconds per file second. */
+  readonly captureRateFactor: Signal<number>;
   /** The frame that is asked for. */
   readonly frame: Signal<number>;
   /** The chosen arm. */

@@ -1,4 +1,11 @@
-import type { FieldOfView, Plumb, StrokeKind, Travel, View } from '@stillstroke/contract/clip-facts';
+import type {
+  FieldOfView,
+  KnownDistance,
+  Plumb,
+  StrokeKind,
+  Travel,
+  View,
+} from '@stillstroke/contract/clip-facts';
 import type { Scale } from '@stillstroke/contract/scale';
 import type { Arm } from '@stillstroke/contract/strokes';
 import { markKey, type DeskMark } from './desk-mark';
@@ -32,9 +39,14 @@ export type DeskChange =
     }
   | { readonly kind: 'plumb'; readonly before: Plumb | null; readonly after: Plumb | null }
   | { readonly kind: 'scale'; readonly before: Scale | null; readonly after: Scale | null }
+  | {
+      readonly kind: 'distance';
+      readonly before: KnownDistance | null;
+      readonly after: KnownDistance | null;
+    }
   | { readonly kind: 'facts'; readonly before: ClipFacts; readonly after: ClipFacts };
 
-/** Names the thing that a change is about: `mark:left:168`, `stroke:<id>`, `plumb`, `scale`, `facts`. */
+/** Names the thing that a change is about: `mark:left:168`, `stroke:<id>`, `plumb`, `scale`, `distance`, `facts`. */
 export function thingOf(change: DeskChange): string {
   switch (change.kind) {
     case 'mark':
@@ -43,6 +55,7 @@ export function thingOf(change: DeskChange): string {
       return `stroke:${change.id}`;
     case 'plumb':
     case 'scale':
+    case 'distance':
     case 'facts':
       return change.kind;
   }

@@ -1,5 +1,5 @@
 import { computed, signal } from '@angular/core';
-import type { Clip, Plumb } from '@stillstroke/contract/clip-facts';
+import type { Clip, KnownDistance, Plumb } from '@stillstroke/contract/clip-facts';
 import type { Scale } from '@stillstroke/contract/scale';
 import type { Arm } from '@stillstroke/contract/strokes';
 import type { ClipFacts, DeskChange } from './desk-change';
@@ -18,6 +18,7 @@ export class DeskFilm {
   private readonly storedStrokes = signal<readonly DeskStroke[]>([]);
   private readonly storedPlumb = signal<Plumb | null>(null);
   private readonly storedScale = signal<Scale | null>(null);
+  private readonly storedDistance = signal<KnownDistance | null>(null);
   private readonly storedFacts;
   private readonly storedSpread;
   private readonly preview = signal<Preview | null>(null);
@@ -42,6 +43,7 @@ export class DeskFilm {
     return preview?.kind === 'scale' ? preview.scale : this.storedScale();
   });
   readonly strokes = this.storedStrokes.asReadonly();
+  readonly distance = this.storedDistance.asReadonly();
   readonly facts;
   readonly clip;
 
@@ -60,9 +62,11 @@ export class DeskFilm {
       ...this.storedFacts(),
       plumb: this.plumb(),
       jointUncertaintyPx: this.storedSpread(),
+      distance: this.storedDistance(),
     }));
     this.storedPlumb.set(given.plumb);
     this.storedScale.set(scale);
+    this.storedDistance.set(given.distance);
     this.storedStrokes.set(inOrder(strokes));
     this.storedMarks.set(new Map(marks.map((mark) => [markKey(mark.arm, mark.frame), mark])));
   }
@@ -109,6 +113,9 @@ export class DeskFilm {
         break;
       case 'scale':
         this.storedScale.set(change.after);
+        break;
+      case 'distance':
+        this.storedDistance.set(change.after);
         break;
       case 'facts':
         this.storedFacts.set(change.after);

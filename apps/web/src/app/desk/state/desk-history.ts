@@ -21,9 +21,11 @@ export const historyPolicies = {
   'remove-mark': 'step',
   /** One step, also where it ends one stroke and begins the next. */
   'set-event': 'step',
+  'set-event-source': 'step',
   'set-breath': 'step',
   'remove-stroke': 'step',
   'set-plumb': 'step',
+  'set-distance': 'step',
   'set-facts': 'merge',
   'set-scale': 'step',
   'nudge-scale': 'merge',

@@ -16,7 +16,7 @@ export class DeskPlace {
   /** Where Enter would put the joint down, picture pixels; null until it was moved once. */
   readonly crosshair = this.cross.asReadonly();
 
-  constructor(private readonly timesUs: Signal<readonly number[]>) {}
+  constructor(readonly timesUs: Signal<readonly number[]>) {}
 
   /** To a frame; frames outside the clip lead to its first or last one. */
   setFrame(frame: number): void {

@@ -1,6 +1,6 @@
 import { signal } from '@angular/core';
 
-/** Share of the clip's own speed. */
+/** Share of the world's speed: 1 is as fast as the swimmer was, whatever the file plays like. */
 export type Speed = 1 | 0.5 | 0.25 | 0.125;
 export const speeds: readonly { readonly value: Speed; readonly name: string }[] = [
   { value: 1, name: '1' },
@@ -42,6 +42,11 @@ export class DeskPlay {
 
   setSpeed(speed: Speed): void {
     this.rate.set(speed);
+  }
+
+  /** The fastest of the speeds at which the file need not play faster than its own: where a slow-motion clip begins. */
+  static suiting(captureRateFactor: number): Speed {
+    return speeds.find(({ value }) => value <= Math.max(captureRateFactor, 0.125))?.value ?? 0.125;
   }
 
   setBehind(behind: boolean): void {

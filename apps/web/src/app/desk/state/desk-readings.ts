@@ -3,6 +3,7 @@ import type { Clip } from '@stillstroke/contract/clip-facts';
 import type { Arm } from '@stillstroke/contract/strokes';
 import { armAngles } from '@stillstroke/geometry/angles/arm-angles';
 import type { FrameMark } from '@stillstroke/geometry/arm';
+import { indexOfCoordination, type Coordination } from '@stillstroke/geometry/events/coordination';
 import type { ReadingContext } from '@stillstroke/geometry/measures/reading-context';
 import { strokeMeasures, type StrokeMeasures } from '@stillstroke/geometry/measures/stroke-measures';
 import { ok, refused, type Outcome } from '@stillstroke/geometry/outcome';
@@ -31,11 +32,14 @@ export class DeskReadings {
   readonly completeMarks: Signal<Readonly<Record<Arm, readonly CompleteMark[]>>>;
   /** Measures of every stroke that has its events, by id. */
   readonly measures: Signal<ReadonlyMap<string, StrokeMeasures>>;
+  /** Index of coordination over the clip, percent of the cycle, or why there is none. */
+  readonly coordination: Signal<Outcome<Coordination<CompleteStroke>>>;
 
   constructor(private readonly source: Source) {
     this.context = computed(() => readingContext(source.clip()), { equal: sameContext });
     this.completeMarks = computed(() => sortOut(source.marks()));
     this.measures = computed(() => this.measureAll());
+    this.coordination = computed(() => this.coordinate());
   }
 
   read(mark: DeskMark | null): FrameReading {
@@ -46,6 +50,16 @@ export class DeskReadings {
     if (!angles.ok) return angles;
     const uncertainty = armAngleUncertainty(mark, context);
     return uncertainty.ok ? ok({ angles: angles.value, uncertainty: uncertainty.value }) : uncertainty;
+  }
+
+  private coordinate(): Outcome<Coordination<CompleteStroke>> {
+    const whole = this.source.strokes().filter(isWhole);
+    const of = (side: Arm) => whole.filter(({ arm }) => arm === side);
+    return indexOfCoordination(
+      { left: of('left'), right: of('right') },
+      this.source.timesUs(),
+      this.context(),
+    );
   }
 
   /** Only strokes whose events, marks or context changed are measured again: a drag touches one of many. */
@@ -71,11 +85,18 @@ interface Remembered {
   readonly measures: StrokeMeasures;
 }
 
-function readingContext({ travel, plumb, captureRateFactor, jointUncertaintyPx }: Clip): ReadingContext {
+function readingContext({
+  travel,
+  plumb,
+  distance,
+  captureRateFactor,
+  jointUncertaintyPx,
+}: Clip): ReadingContext {
   return {
     travel,
     plumb,
     captureRateFactor,
+    distance,
     // As the server has them: whose marks they are decides, and both must read alike.
     jointUncertaintyPx,
   };
@@ -85,7 +106,11 @@ function sameContext(a: ReadingContext, b: ReadingContext): boolean {
   const [was, is] = [a.jointUncertaintyPx, b.jointUncertaintyPx];
   const sameSpread = was.shoulder === is.shoulder && was.elbow === is.elbow && was.wrist === is.wrist;
   return (
-    a.travel === b.travel && a.plumb === b.plumb && a.captureRateFactor === b.captureRateFactor && sameSpread
+    a.travel === b.travel &&
+    a.plumb === b.plumb &&
+    a.distance === b.distance &&
+    a.captureRateFactor === b.captureRateFactor &&
+    sameSpread
   );
 }
 

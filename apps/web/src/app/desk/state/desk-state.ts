@@ -131,6 +131,7 @@ export class DeskState {
       scale: this.scale.fitted,
     });
 
+    this.play.setSpeed(DeskPlay.suiting(input.clip.captureRateFactor));
     this.plumbAssumed = computed(() => film.plumb() === null);
     this.task = computed(() => this.taskNow());
     this.readingAtFrame = computed(() => ({

@@ -1,8 +1,9 @@
 import type { Arm, Stroke } from '@stillstroke/contract/strokes';
-import type { StrokeEvents } from '@stillstroke/geometry/events/stroke';
+import { sourceOf } from '@stillstroke/geometry/events/event-moment';
+import type { EventName, EventSource, EventSources, StrokeEvents } from '@stillstroke/geometry/events/stroke';
 
 /** A stroke as the Desk holds it: until entry, catch and exit are set it is a draft, kept on the device only. */
-export interface DeskStroke {
+export interface DeskStroke extends EventSources {
   readonly id: string;
   readonly arm: Arm;
   readonly entry: number;
@@ -12,7 +13,7 @@ export interface DeskStroke {
   readonly breath: boolean;
 }
 
-export type EventName = 'entry' | 'catch' | 'exit' | 'nextEntry';
+export type { EventName, EventSource };
 export const eventsInOrder: readonly EventName[] = ['entry', 'catch', 'exit', 'nextEntry'];
 export const eventWords: Readonly<Record<EventName, string>> = {
   entry: 'entry',
@@ -28,8 +29,18 @@ export function isWhole(stroke: DeskStroke): stroke is CompleteStroke {
   return stroke.catch !== null && stroke.exit !== null;
 }
 
-export function deskStrokeOf({ id, arm, entry, catch: caught, exit, nextEntry, breath }: Stroke): DeskStroke {
-  return { id, arm, entry, catch: caught, exit, nextEntry, breath };
+export function deskStrokeOf({ clipId: _, version: __, ...stroke }: Stroke): DeskStroke {
+  return stroke;
+}
+
+/** What each event was chosen by, in full: changes kept on the device from before may not say. */
+export function sourcesOf(stroke: DeskStroke): Required<EventSources> {
+  return {
+    entrySource: sourceOf(stroke, 'entry'),
+    catchSource: sourceOf(stroke, 'catch'),
+    exitSource: sourceOf(stroke, 'exit'),
+    nextEntrySource: sourceOf(stroke, 'nextEntry'),
+  };
 }
 
 /** By entry, earliest first. */
@@ -54,7 +65,11 @@ export function strokeAt(strokes: readonly DeskStroke[], arm: Arm, frame: number
 
 export function sameStroke(a: DeskStroke | null, b: DeskStroke | null): boolean {
   if (a === null || b === null) return a === b;
-  return a.id === b.id && eventsInOrder.every((event) => a[event] === b[event]) && a.breath === b.breath;
+  return (
+    a.id === b.id &&
+    eventsInOrder.every((event) => a[event] === b[event] && sourceOf(a, event) === sourceOf(b, event)) &&
+    a.breath === b.breath
+  );
 }
 
 const ordinals = [

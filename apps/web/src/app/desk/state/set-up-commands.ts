@@ -1,6 +1,13 @@
 import { signal } from '@angular/core';
-import { captureRateFactorSchema, type Plumb } from '@stillstroke/contract/clip-facts';
+import {
+  captureRateFactorSchema,
+  knownDistanceSchema,
+  type KnownDistance,
+  type Plumb,
+} from '@stillstroke/contract/clip-facts';
+import { swimSpeed } from '@stillstroke/geometry/events/known-distance';
 import { cameraRoll } from '@stillstroke/geometry/calibration/plumb';
+import { formatFigure } from '../../ui/figure/format-figure';
 import { sayReason } from '../../ui/figure/reason-words';
 import type { ClipFacts } from './desk-change';
 import type { DeskCore } from './desk-core';
@@ -15,9 +22,12 @@ export class SetUpCommands {
 
   /** View, travel, stroke kind and capture rate as they are now. */
   readonly facts: DeskCore['film']['facts'];
+  /** How far the swimmer travelled between two frames; null while nobody has said. */
+  readonly distance: DeskCore['film']['distance'];
 
   constructor(private readonly core: DeskCore) {
     this.facts = core.film.facts;
+    this.distance = core.film.distance;
   }
 
   startPlumb(): void {
@@ -48,6 +58,26 @@ export class SetUpCommands {
       plumb
         ? `Plumb set: the picture leans ${Math.abs(roll.value.rollDeg).toFixed(1)}°.`
         : 'Plumb taken away: the vertical of the picture is assumed.',
+    );
+  }
+
+  /** null takes the distance away. */
+  setDistance(distance: KnownDistance | null): boolean {
+    const { film, place } = this.core;
+    const before = film.distance();
+    const checked = knownDistanceSchema.nullable().safeParse(distance);
+    if (!checked.success) {
+      return this.core.refuse(checked.error.issues[0]?.message ?? 'This distance cannot be used.');
+    }
+    const { captureRateFactor } = film.facts();
+    const speed = swimSpeed(distance, place.timesUs(), { captureRateFactor });
+    if (distance !== null && !speed.ok) return this.core.refuse(`${capital(sayReason(speed.reason))}.`);
+    if (JSON.stringify(before) === JSON.stringify(distance)) return true;
+    this.core.commit('set-distance', 'the known distance', [{ kind: 'distance', before, after: distance }]);
+    return this.core.say(
+      speed.ok
+        ? `Distance set: ${formatFigure(speed.value.metresPerSecond, 'mPerS', speed.value.standard)}.`
+        : 'Distance taken away: no stroke length without it.',
     );
   }
 

@@ -1,6 +1,15 @@
 import { computed } from '@angular/core';
 import type { DeskCore } from './desk-core';
-import { eventWords, nameStroke, strokeAt, type DeskStroke, type EventName } from './desk-stroke';
+import { sourceOf } from '@stillstroke/geometry/events/event-moment';
+import {
+  eventsInOrder,
+  eventWords,
+  nameStroke,
+  strokeAt,
+  strokesOf,
+  type DeskStroke,
+  type EventName,
+} from './desk-stroke';
 import { capital } from './marking';
 import { eventOfStroke, eventOnFrame, type EventOutcome } from './set-event';
 
@@ -28,6 +37,47 @@ export class StrokeCommands {
   /** Sets one event of one stroke; null takes the next entry away. */
   setEventOf(stroke: DeskStroke, event: EventName, frame: number | null = this.core.place.frame()): boolean {
     return this.finish(event, frame, eventOfStroke(this.core.film.strokes(), stroke, event, frame));
+  }
+
+  /**
+   * Turns an event over between the hand that was seen and the wrist that stands in for it. A next entry that is the entry
+   * of the following stroke is one event of the water: both turn.
+   */
+  toggleSource(stroke: DeskStroke, event: EventName): boolean {
+    const source = sourceOf(stroke, event) === 'hand-seen' ? 'wrist-proxy' : 'hand-seen';
+    const turned = (one: DeskStroke, which: EventName) => ({
+      kind: 'stroke' as const,
+      id: one.id,
+      before: one,
+      after: { ...one, [`${which}Source`]: source },
+    });
+    const others = strokesOf(this.core.film.strokes(), stroke.arm).filter(({ id }) => id !== stroke.id);
+    const twin =
+      event === 'entry'
+        ? others.find(({ nextEntry }) => nextEntry === stroke.entry)
+        : event === 'nextEntry'
+          ? others.find(({ entry }) => entry === stroke.nextEntry)
+          : undefined;
+    const changes = [turned(stroke, event)];
+    if (twin) changes.push(turned(twin, event === 'entry' ? 'nextEntry' : 'entry'));
+    const words = `${eventWords[event]} of the ${this.name(stroke)}`;
+    this.core.commit('set-event-source', `what the ${words} was chosen by`, changes);
+    return this.core.say(
+      source === 'hand-seen'
+        ? `${capital(words)}: the hand was seen.`
+        : `${capital(words)}: the wrist stands in for the hand, with a wider ±.`,
+    );
+  }
+
+  /** The same of the event on the shown frame. */
+  toggleSourceHere(): boolean {
+    const { film, place } = this.core;
+    const [frame, arm] = [place.frame(), place.arm()];
+    for (const stroke of strokesOf(film.strokes(), arm)) {
+      const event = eventsInOrder.find((one) => stroke[one] === frame);
+      if (event) return this.toggleSource(stroke, event);
+    }
+    return this.core.refuse(`No event of the ${arm} arm on this frame.`);
   }
 
   setBreath(breath: boolean, stroke: DeskStroke | null = this.current()): boolean {

@@ -16,6 +16,7 @@ export const testClip: Clip = {
   captureRateFactor: 1,
   fieldOfView: null,
   plumb: { top: { x: 640, y: 60 }, bottom: { x: 640, y: 660 } },
+  distance: null,
   status: 'ready',
   width: 1280,
   height: 720,

@@ -107,8 +107,12 @@ function paintPoints(
   const { middle } = scene.lanes[arm];
   context.lineWidth = 1.5;
   context.strokeStyle = colours.text;
-  for (const { x } of scene.events.filter((event) => event.arm === arm))
+  for (const { x, byWrist } of scene.events.filter((event) => event.arm === arm)) {
+    // Broken where the wrist stands in for the hand.
+    context.setLineDash(byWrist ? [3, 3] : []);
     stroke(context, x, middle - 9, x, middle + 9);
+  }
+  context.setLineDash([]);
   context.fillStyle = colours.ground;
   for (const { x } of scene.marks.filter((mark) => mark.arm === arm)) {
     context.beginPath();

@@ -1,9 +1,11 @@
+import { sourceOf } from '@stillstroke/geometry/events/event-moment';
+import type { EventSources } from '@stillstroke/geometry/events/stroke';
 import type { StripWindow } from './strip-window';
 
 export type StripArm = 'left' | 'right';
 
 /** A stroke as the strip draws it; events that are not set yet are null. Frames. */
-export interface StripStroke {
+export interface StripStroke extends EventSources {
   readonly id: string;
   readonly arm: StripArm;
   readonly entry: number;
@@ -47,7 +49,8 @@ export interface StripScene {
   readonly ticks: readonly { readonly x: number; readonly label: string | null }[];
   readonly lanes: Readonly<Record<StripArm, Lane>>;
   readonly bars: readonly PhaseBar[];
-  readonly events: readonly { readonly arm: StripArm; readonly x: number }[];
+  /** `byWrist`: the wrist stands in for the hand there. */
+  readonly events: readonly { readonly arm: StripArm; readonly x: number; readonly byWrist: boolean }[];
   readonly marks: readonly { readonly arm: StripArm; readonly x: number; readonly frame: number }[];
   readonly curves: readonly {
     readonly arm: StripArm;
@@ -89,9 +92,11 @@ export function layOut(content: StripContent, window: StripWindow, size: Size): 
     lanes,
     bars: strokes.flatMap((stroke) => barsOf(stroke, x, size)),
     events: strokes.flatMap((stroke) =>
-      [stroke.entry, stroke.catch, stroke.exit].flatMap((frame) =>
-        frame !== null && inView(frame) ? [{ arm: stroke.arm, x: x(frame) }] : [],
-      ),
+      (['entry', 'catch', 'exit'] as const).flatMap((event) => {
+        const frame = stroke[event];
+        if (frame === null || !inView(frame)) return [];
+        return [{ arm: stroke.arm, x: x(frame), byWrist: sourceOf(stroke, event) === 'wrist-proxy' }];
+      }),
     ),
     marks: content.marks
       .filter(({ frame }) => inView(frame))

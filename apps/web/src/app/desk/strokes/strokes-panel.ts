@@ -1,4 +1,5 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import { sourceOf } from '@stillstroke/geometry/events/event-moment';
 import type { DeskState } from '../state/desk-state';
 import { eventsInOrder, isWhole, nameStroke, type DeskStroke, type EventName } from '../state/desk-stroke';
 import { capital } from '../state/marking';
@@ -37,6 +38,8 @@ export class StrokesPanel {
         event,
         label: capital(eventWords[event]),
         frame: stroke[event],
+        byWrist: sourceOf(stroke, event) === 'wrist-proxy',
+        says: `${sourceOf(stroke, event) === 'wrist-proxy' ? 'Wrist' : 'Hand'} at the ${eventWords[event]}`,
       })),
       midPull: this.midPull(stroke),
       needed: state.stillToMark(stroke).map(({ need, frame }) => ({ frame, label: needWords[need] })),

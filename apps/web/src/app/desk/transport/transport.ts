@@ -13,7 +13,15 @@ import type { DeskState } from '../state/desk-state';
 export class Transport {
   readonly state = input.required<DeskState>();
 
-  protected readonly speeds = speeds;
+  /** Of slow-motion film it is said which speed is the water's and which the file's own. */
+  protected readonly speeds = computed(() => {
+    const { captureRateFactor } = this.state().clip();
+    if (captureRateFactor === 1) return speeds;
+    return speeds.map(({ value, name }) => {
+      const says = value === captureRateFactor ? ', as the file' : value === 1 ? ', as in the water' : '';
+      return { value, name: name + says };
+    });
+  });
   protected readonly lastFrame = computed(() => this.state().frameTimesUs().length - 1);
   /** Each button stops what it started, and stays in place, so that it keeps the focus. */
   protected readonly ways = [

@@ -27,7 +27,8 @@ export interface ExplainedInput {
 export interface ExplainedFrame {
   readonly clipId: string;
   readonly frame: number;
-  readonly arm: 'left' | 'right';
+  /** null: of both arms. */
+  readonly arm: 'left' | 'right' | null;
   readonly says: string;
 }
 

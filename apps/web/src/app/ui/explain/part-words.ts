@@ -37,7 +37,13 @@ export function sayParts(
   }));
 }
 
-const signs: Readonly<Record<string, string>> = { share: ' points', deg: '°', perMinute: ' a minute' };
+const signs: Readonly<Record<string, string>> = {
+  share: ' points',
+  deg: '°',
+  perMinute: ' a minute',
+  m: ' m',
+  m2PerS: ' m²/s',
+};
 
 /** `± 1.2°`; two digits at least, so that small parts can be told apart. */
 export function sayAlone(alone: number, unit: Unit): string {

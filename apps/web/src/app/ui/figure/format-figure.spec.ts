@@ -21,6 +21,19 @@ describe('figures on the screen', () => {
     expect(formatUncertainty(0.0001, 'share')).toBe('± 0.1 %');
   });
 
+  it('shows metres to the hundredth where the uncertainty carries it', () => {
+    expect(formatFigure(1.9312, 'm', 0.033)).toBe('1.93 m');
+    expect(formatUncertainty(0.033, 'm')).toBe('± 0.03 m');
+    expect(formatFigure(1.9312, 'm', 0.2)).toBe('1.9 m');
+    expect(formatUncertainty(0.002, 'm2PerS')).toBe('± 0.01 m²/s');
+    expect(formatFigure(1.42, 'mPerS', 0.016)).toBe('1.42 m/s');
+    expect(formatFigure(1.9312, 'm')).toBe('1.93 m');
+    expect(formatDifference(-0.05, 'm')).toBe('0.05 m');
+    expect(formatInterval({ low: -0.02, high: 0.11 }, 'm')).toBe('−0.02 to 0.11');
+    // Degrees and percent never get more than tenths.
+    expect(formatFigure(46.27, 'deg', 0.04)).toBe('46.3°');
+  });
+
   it('writes signs where they mean something, and a true minus', () => {
     expect(formatFigure(6.2, 'deg', 1, true)).toBe('+6°');
     expect(formatFigure(-6.2, 'deg', 1, true)).toBe('−6°');

@@ -1,5 +1,6 @@
 import { measureNames } from '@stillstroke/contract/measure-names';
 import type { Measure } from '@stillstroke/contract/measures';
+import type { TrendMeasure } from '@stillstroke/contract/trend';
 import { formatDifference, unitOf } from './format-figure';
 
 interface MeasureWords {
@@ -56,12 +57,41 @@ export const measureWords: Readonly<Record<Measure, MeasureWords>> = {
     largerBy: (arm, amount) => `${arm} quicker by ${amount}`,
     moved: (larger, amount) => `${larger ? 'quicker' : 'slower'} by ${amount}`,
   },
+  strokeLength: {
+    name: 'Stroke length',
+    explains: 'metres a cycle; the clip’s mean speed by the rate',
+    larger: (arm) => `The ${arm} arm’s cycles are longer`,
+    largerBy: (arm, amount) => `${arm} longer by ${amount}`,
+    moved: (larger, amount) => `${larger ? 'longer' : 'shorter'} by ${amount}`,
+  },
+  strokeIndex: {
+    name: 'Stroke index',
+    explains: 'speed × stroke length; within one stroke kind only',
+    larger: (arm) => `The ${arm} arm’s stroke index is higher`,
+    largerBy: (arm, amount) => `${arm} higher by ${amount}`,
+    moved: (larger, amount) => `${larger ? 'higher' : 'lower'} by ${amount}`,
+  },
 };
 
 /** Order in which measures are listed and looked at for the sentence of a page. */
 export const measuresInOrder = Object.keys(measureWords) as readonly Measure[];
 
+/** Of both arms together; Trend follows it beside the measures of an arm. */
+export const coordinationWords = {
+  name: 'Index of coordination',
+  explains: 'share of the cycle; − gap between the arms’ pulls, + overlap',
+  moved: (larger: boolean, amount: string) => `${amount} ${larger ? 'less gap' : 'more gap'}`,
+};
+
+/** The name of whatever Trend follows. */
+export function nameOf(measure: TrendMeasure): string {
+  return measure === 'coordination' ? coordinationWords.name : measureWords[measure].name;
+}
+
 /** `later by 8 points`, for a change given in the unit of the measure. */
-export function sayMoved(measure: Measure, change: number): string {
+export function sayMoved(measure: TrendMeasure, change: number): string {
+  if (measure === 'coordination') {
+    return coordinationWords.moved(change > 0, formatDifference(change, 'share'));
+  }
   return measureWords[measure].moved(change > 0, formatDifference(change, unitOf[measure]));
 }

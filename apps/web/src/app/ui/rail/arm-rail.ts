@@ -75,7 +75,7 @@ export class ArmRail {
     const [low, high] = this.domain();
     return [low, (low + high) / 2, high].map((value) => ({
       x: this.x()(value),
-      text: `${Math.round(value)}${this.suffix()}`.replace('-', '−'),
+      text: `${Math.round(value * 100) / 100}${this.suffix()}`.replace('-', '−'),
     }));
   });
   protected readonly leftDrawn = computed(() => this.drawn(this.left()));

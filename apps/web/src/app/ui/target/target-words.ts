@@ -23,13 +23,20 @@ export const targetArmWords: Readonly<Record<TargetArm, string>> = {
   right: 'right arm',
 };
 
-/** An end as a coach would type it: at most one decimal, percent for shares. */
+/** An end as a coach would type it: at most one decimal, two of metres, percent for shares. */
 export function endOnScreen(end: number, unit: Unit): string {
   const shown = onScreen(end, unit);
+  if (unit === 'm' || unit === 'm2PerS') return fixed(shown, 2);
   return fixed(shown, Math.abs(shown - Math.round(shown)) < 0.05 ? 0 : 1);
 }
 
-const units: Readonly<Record<string, string>> = { share: ' %', deg: '°', perMinute: ' a minute' };
+const units: Readonly<Record<string, string>> = {
+  share: ' %',
+  deg: '°',
+  perMinute: ' a minute',
+  m: ' m',
+  m2PerS: ' m²/s',
+};
 
 /** `up to 35 %`, `from 90°`, `90 to 110°`. */
 export function sayBand({ low, high, measure }: Pick<Target, 'low' | 'high' | 'measure'>): string {
