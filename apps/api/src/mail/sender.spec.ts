@@ -10,7 +10,7 @@ import { readSettings } from '../platform/settings';
 import { callOffMails, queueMail } from './queue-mail';
 import { sendNext, startSending } from './sender';
 import { smtpDelivery } from './smtp-delivery';
-import { takeMail } from './take-mail';
+import { settleMail, takeMail } from './take-mail';
 import { openMailServer, placeAnswerMail, type TestMailServer } from './test-mails';
 
 let club: TestClub;
@@ -260,7 +260,8 @@ describe('a sender', () => {
     expect(await sendNext(club.context, through(server.url))).toBe('nothing-due');
     later(6);
     expect(await sendNext(club.context, through(server.url))).toBe('settled');
-    expect(row(id)).toMatchObject({ status: 'sent', attempts: 2 });
+    if (slow) settleMail(club.context, slow, { how: 'refused', reason: 'Too late to say.' });
+    expect(row(id)).toMatchObject({ status: 'sent', attempts: 2, lastError: null });
     expect(server.taken).toHaveLength(1);
   });
 
