@@ -1,5 +1,6 @@
 import { type Outcome, ok } from '../outcome';
 import { distance, type VideoPoint } from '../points/video-point';
+import { combine, type UncertaintyPart, type UncertaintySource } from '../uncertainty/parts';
 import type { Matrix3 } from './homography';
 import { FIT_STEP, type FittedScale, type KnownLength } from './picture-scale';
 import { planeVector, type PlaneReason, type PlaneVector } from './plane-vector';
@@ -9,6 +10,8 @@ export interface MeasuredDistance {
   readonly metres: number;
   /** Standard uncertainty: of the scale's points, of its known length, and of the two places themselves. */
   readonly uncertaintyM: number;
+  /** What it is made of, largest first: `first-place`, `second-place`, `scale`. */
+  readonly parts: readonly UncertaintyPart[];
 }
 
 /** Standard uncertainties of the two places, pixels per coordinate. */
@@ -34,9 +37,9 @@ export function readOff(
     const moved = planeVector(matrix, scale.known, [a, b], down);
     return moved.ok ? read(moved.value) : NaN;
   };
-  let variance = 0;
-  const add = (rise: number): void => {
-    variance += Number.isFinite(rise) ? (rise / (2 * FIT_STEP)) ** 2 : 0;
+  const contributions: { source: UncertaintySource; alone: number }[] = [];
+  const add = (source: UncertaintySource, rise: number): void => {
+    contributions.push({ source, alone: Number.isFinite(rise) ? Math.abs(rise) / (2 * FIT_STEP) : 0 });
   };
   const moved = (point: VideoPoint, axis: 'x' | 'y', by: number): VideoPoint => ({
     ...point,
@@ -44,11 +47,18 @@ export function readOff(
   });
   for (const axis of ['x', 'y'] as const) {
     const [a, b] = [placing.from, placing.to];
-    add(at(scale.toPlane, moved(from, axis, a), to) - at(scale.toPlane, moved(from, axis, -a), to));
-    add(at(scale.toPlane, from, moved(to, axis, b)) - at(scale.toPlane, from, moved(to, axis, -b)));
+    add(
+      'first-place',
+      at(scale.toPlane, moved(from, axis, a), to) - at(scale.toPlane, moved(from, axis, -a), to),
+    );
+    add(
+      'second-place',
+      at(scale.toPlane, from, moved(to, axis, b)) - at(scale.toPlane, from, moved(to, axis, -b)),
+    );
   }
-  for (const { above, below } of scale.variants) add(at(above, from, to) - at(below, from, to));
-  return ok({ metres: read(value.value), uncertaintyM: Math.sqrt(variance) });
+  for (const { above, below } of scale.variants) add('scale', at(above, from, to) - at(below, from, to));
+  const { standard, parts } = combine(contributions);
+  return ok({ metres: read(value.value), uncertaintyM: standard, parts });
 }
 
 /** The distance between two places of the picture, on the scale's plane. */

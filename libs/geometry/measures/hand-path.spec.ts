@@ -34,6 +34,11 @@ describe('hand path', () => {
     // Scale √2/400 of 1 m; places √(2² + 1²) px of 5 mm; plumb √2/600 of the 20 px upward.
     const parts = [Math.SQRT2 / 400, Math.sqrt(5) * 0.005, (0.1 * Math.SQRT2) / 600];
     expect(reach.uncertaintyM).toBeCloseTo(Math.hypot(...parts), 5);
+    const alone = Object.fromEntries(reach.parts.map((part) => [part.source, part.alone]));
+    expect(alone['shoulder-mark']).toBeCloseTo(0.01, 5);
+    expect(alone['wrist-mark']).toBeCloseTo(0.005, 5);
+    expect(alone['scale']).toBeCloseTo(Math.SQRT2 / 400, 5);
+    expect(reach.parts.map((part) => part.source)).toEqual(['shoulder-mark', 'wrist-mark', 'scale', 'roll']);
     const depth = valueOf(handDepth);
     expect(depth.metres).toBeCloseTo(0.9, 12);
     expect(depth.frame).toBe(20);

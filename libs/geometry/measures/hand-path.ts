@@ -6,6 +6,7 @@ import { cameraRoll, rollUncertaintyDeg } from '../calibration/plumb';
 import type { StrokeEvents } from '../events/stroke';
 import { type Outcome, ok, refused } from '../outcome';
 import type { MarkingContext } from '../uncertainty/arm-uncertainty';
+import { combine, type UncertaintySource } from '../uncertainty/parts';
 
 /** A distance of the arm with the frame that shows it. */
 export interface HandReading extends MeasuredDistance {
@@ -63,6 +64,12 @@ function deepest(readings: readonly Outcome<HandReading, HandReason>[]): Outcome
   return ok({ ...found, frames: read.map(({ frame }) => frame) });
 }
 
+/** What the two places of a distance are here. */
+const PLACES: Partial<Record<UncertaintySource, UncertaintySource>> = {
+  'first-place': 'shoulder-mark',
+  'second-place': 'wrist-mark',
+};
+
 /** From shoulder to wrist, with the plumb's own uncertainty, which turns the vector: u = other component · u(ρ). */
 function fromShoulder(
   scale: FittedScale,
@@ -82,8 +89,12 @@ function fromShoulder(
   const [value, above, below] = [at(rollDeg), at(rollDeg + u / 2), at(rollDeg - u / 2)];
   if (!value.ok) return value;
   const turning = above.ok && below.ok ? above.value.metres - below.value.metres : 0;
-  const uncertaintyM = Math.hypot(value.value.uncertaintyM, turning);
-  return ok({ metres: value.value.metres, uncertaintyM, frame: mark.frame, frames: [mark.frame] });
+  const { standard, parts } = combine([
+    ...value.value.parts.map(({ source, alone }) => ({ source: PLACES[source] ?? source, alone })),
+    { source: 'roll', alone: Math.abs(turning) },
+  ]);
+  const { metres } = value.value;
+  return ok({ metres, uncertaintyM: standard, parts, frame: mark.frame, frames: [mark.frame] });
 }
 
 /** Plumb-down in the picture for a roll: + leans the lower end to the right. */

@@ -14,7 +14,11 @@ export type UncertaintySource =
   | 'second-strokes'
   | 'shared'
   | 'distance'
-  | 'time';
+  | 'time'
+  /** The two places between which something is measured, and the scale it is measured with. */
+  | 'first-place'
+  | 'second-place'
+  | 'scale';
 
 /** One contribution to a standard uncertainty. */
 export interface UncertaintyPart {

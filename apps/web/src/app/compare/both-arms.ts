@@ -1,8 +1,11 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import { RouterLink } from '@angular/router';
 import type { Comparison } from '@stillstroke/contract/comparison';
+import type { Explain } from '../ui/explain/explanation';
+import { How } from '../ui/explain/how';
 import { formatFigure, formatUncertainty } from '../ui/figure/format-figure';
 import { sayCoordination } from '../ui/figure/say-coordination';
+import { explainCoordination } from './explain-coordination';
 
 const splitNames = {
   all: 'All passages',
@@ -13,10 +16,15 @@ const splitNames = {
 /** What both arms do together: the index of coordination with its mode, apart by breath, and the passages behind it. */
 @Component({
   selector: 'st-both-arms',
-  imports: [RouterLink],
+  imports: [How, RouterLink],
   template: `
     <h2>Both arms together</h2>
-    <p class="says">{{ said().headline }}</p>
+    <p class="says">
+      {{ said().headline }}
+      @if (rows().length > 0) {
+        <st-how about="Index of coordination" [explain]="explain" />
+      }
+    </p>
     <p class="st-quiet">{{ said().detail }}</p>
     @if (rows().length > 0) {
       <dl>
@@ -51,6 +59,8 @@ const splitNames = {
 })
 export class BothArms {
   readonly coordination = input.required<Comparison['coordination']>();
+
+  protected readonly explain: Explain = () => explainCoordination(this.coordination().all);
 
   protected readonly said = computed(() => {
     const { value, uncertainty, mode, passages } = this.coordination().all;

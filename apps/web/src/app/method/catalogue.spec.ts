@@ -39,6 +39,13 @@ describe('the catalogue of methods', () => {
     expect(entryOf(angle)?.kind).toBe('angle');
   });
 
+  it.each(['idc', 'reachAtEntry', 'handDepth'])(
+    'says how %s is computed, which is no measure of Trend',
+    (name) => {
+      expect(entryOf(name)?.kind).toBe('measure');
+    },
+  );
+
   it.each(statistics)('says how the statistic %s is computed', (name) => {
     expect(entryOf(name)?.kind).toBe('statistic');
   });

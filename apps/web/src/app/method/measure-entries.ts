@@ -201,6 +201,45 @@ export const measureEntries = {
     ],
     limits: ['As good as the distance. Near and far arm have different scales in one side view.'],
   },
+  reachAtEntry: {
+    name: 'Reach ahead at the entry',
+    kind: 'measure',
+    what: 'How far the wrist is ahead of the shoulder on the frame of the entry, where the clip has a scale in the swimmer’s plane.',
+    steps: [
+      'Bring shoulder and wrist of the entry’s frame from the picture to the scale’s plane.',
+      'Take the part of the way between them that lies across the plumb; ahead in the direction of travel is plus.',
+    ],
+    unit: 'metres',
+    sign: 'Plus: the wrist ahead of the shoulder.',
+    interval: intervalOfShare,
+    sources: [
+      { source: 'plane', where: 'from the picture to the plane, and a length in it' },
+      { source: 'gum2008', where: '§5.1.2, eq. (10), slopes by small moves' },
+    ],
+    limits: [
+      'Nearer or farther than the plane of the scale, lengths are off by a few percent: not for setting left against right.',
+    ],
+  },
+  handDepth: {
+    name: 'Deepest hand',
+    kind: 'measure',
+    what: 'The greatest depth of the wrist below the shoulder of the same frame, from catch to exit, where the clip has a scale in the swimmer’s plane.',
+    steps: [
+      'On every marked frame of the pull bring shoulder and wrist from the picture to the scale’s plane.',
+      'Take the part of the way between them along the plumb, down; the largest of them is the figure.',
+    ],
+    unit: 'metres',
+    sign: 'Plus: below the shoulder.',
+    interval: intervalOfShare,
+    sources: [
+      { source: 'plane', where: 'from the picture to the plane, and a length in it' },
+      { source: 'gum2008', where: '§5.1.2, eq. (10), slopes by small moves' },
+    ],
+    limits: [
+      'Nearer or farther than the plane of the scale, lengths are off by a few percent: not for setting left against right.',
+      'Only marked frames count: between them the hand may have been deeper.',
+    ],
+  },
   strokeIndex: {
     name: 'Stroke index',
     kind: 'measure',

@@ -5,6 +5,7 @@ import { VERTICAL_TOLERANCE_DEG } from '@stillstroke/geometry/events/vertical-at
 import { measuredByName } from '@stillstroke/geometry/measures/measured-by-name';
 import { normalInterval } from '@stillstroke/geometry/uncertainty/elbow-interval';
 import { unitOf, formatFigure, formatRange, formatUncertainty } from '../../ui/figure/format-figure';
+import { sayMetres } from '../../ui/figure/say-metres';
 import { explainMeasure } from '../../ui/explain/explain-measure';
 import type { Explanation } from '../../ui/explain/explanation';
 import { sayParts } from '../../ui/explain/part-words';
@@ -21,6 +22,8 @@ const keys = {
   elbow: 'elbowDeg',
   elbowDrop: 'elbowDropDeg',
 } as const;
+
+const passageEvents = ['exit', 'catch of the other arm', 'exit of the other arm', 'next catch'] as const;
 
 /** Opens the Desk's readings up, from the same results that the Desk shows. */
 export class DeskExplainer {
@@ -45,6 +48,69 @@ export class DeskExplainer {
       inputs: [...sayMarks([mark]), ...sayClip({ ...clip, jointUncertaintyPx: context.jointUncertaintyPx })],
       frames: [{ clipId: clip.id, arm, frame, says: `Frame ${frame}` }],
       parts: sayParts(uncertainty.parts[key], 'deg'),
+      partsOf: 'its ±',
+      also: ['uncertainty', 'projected'],
+    };
+  }
+
+  /** What both arms of the clip do together; null where it cannot be read. */
+  coordination(): Explanation | null {
+    const read = this.state.readings.coordination();
+    if (!read.ok) return null;
+    const { index, uncertainty, interval, mode, cycles, parts } = read.value;
+    // On pages the index is a share like the phases.
+    const share = (percent: number) => percent / 100;
+    const passage = (value: number) => formatFigure(share(value), 'share', share(uncertainty), true);
+    const clipId = this.state.clip().id;
+    return {
+      entry: 'idc',
+      of: `Both arms, ${cycles.length === 1 ? 'one passage' : `${cycles.length} passages`} of this clip`,
+      result: `${passage(index)} ${formatUncertainty(share(uncertainty), 'share')}, ${mode}`,
+      interval: formatRange({ low: share(interval.low), high: share(interval.high) }, 'share'),
+      inputs: cycles.map(({ lag1, lag2, frames }, at) => ({
+        name: `Passage ${at + 1}, from frame ${frames[0]}`,
+        value: `first lag ${passage(lag1)}, second lag ${passage(lag2)}`,
+      })),
+      frames: cycles.flatMap(({ frames }) =>
+        frames.map((frame, at) => ({
+          clipId,
+          frame,
+          arm: null,
+          says: `Frame ${frame}, ${passageEvents[at] ?? 'event'}`,
+        })),
+      ),
+      parts: sayParts(
+        parts.map((part) => ({ ...part, alone: share(part.alone) })),
+        'share',
+      ),
+      partsOf: 'its ±',
+      also: ['uncertainty'],
+    };
+  }
+
+  /** Reach or depth of the current stroke's hand; null without a scale that gives it. */
+  hand(name: 'reachAtEntry' | 'handDepth'): Explanation | null {
+    const [stroke, found] = [this.state.currentStroke(), this.state.view.handPath()?.[name]];
+    if (!stroke || !found?.ok) return null;
+    const { metres, uncertaintyM, parts, frame, frames } = found.value;
+    const [clip, context] = [this.state.clip(), this.state.readings.context()];
+    const mark = this.state.markAt(stroke.arm, frame);
+    return {
+      entry: name,
+      of: `${stroke.arm === 'left' ? 'Left' : 'Right'} arm, one stroke`,
+      result: sayMetres(metres, uncertaintyM),
+      interval: formatRange(normalInterval(metres, uncertaintyM), 'm'),
+      inputs: [
+        ...(isComplete(mark) ? sayMarks([mark]) : []),
+        ...sayClip({ ...clip, jointUncertaintyPx: context.jointUncertaintyPx }),
+      ],
+      frames: frames.map((each) => ({
+        clipId: clip.id,
+        arm: stroke.arm,
+        frame: each,
+        says: `Frame ${each}${each === frame && frames.length > 1 ? ', the deepest' : ''}`,
+      })),
+      parts: sayParts(parts, 'm'),
       partsOf: 'its ±',
       also: ['uncertainty', 'projected'],
     };

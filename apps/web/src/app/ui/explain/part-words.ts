@@ -13,6 +13,9 @@ const words: Readonly<Record<string, string>> = {
   'next-entry-frame': 'choosing the next entry’s frame',
   distance: 'the known distance',
   time: 'the time taken',
+  'first-place': 'placing one end',
+  'second-place': 'placing the other end',
+  scale: 'the scale: its points and its known lengths',
 };
 
 interface Part {
