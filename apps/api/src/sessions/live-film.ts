@@ -39,7 +39,10 @@ export function restorableClip(context: Context, user: SignedInUser, clipId: str
 }
 
 /** Refuses to bring back what was deleted longer ago than can be undone. */
-export function refuseExpired({ settings, now }: Pick<Context, 'settings' | 'now'>, deletedAt: string | null): void {
+export function refuseExpired(
+  { settings, now }: Pick<Context, 'settings' | 'now'>,
+  deletedAt: string | null,
+): void {
   if (deletedAt !== null && deletedAt <= undoCutoff(settings, now())) {
     throw new HttpProblem(410, 'undo-expired', 'This was deleted too long ago to be brought back.');
   }
