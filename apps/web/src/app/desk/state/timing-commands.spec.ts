@@ -80,7 +80,7 @@ describe('a known distance', () => {
     expect(refusal({ metres: NaN }).length).toBeGreaterThan(5);
     expect(refusal({ uncertaintyM: 6 })).toContain('smaller than the distance');
     expect(refusal({ fromFrame: 240 })).toContain('after the first');
-    expect(refusal({ toFrame: 300 })).toBe('A frame lies outside the clip.');
+    expect(refusal({ toFrame: 300 })).toContain('A frame lies outside the clip');
     expect(desk.setUp.distance()).toBeNull();
   });
 });

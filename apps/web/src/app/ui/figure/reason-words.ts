@@ -21,7 +21,7 @@ const words: Readonly<Record<string, string>> = {
   'plumb-unusable': 'the plumb line cannot be used; draw it again',
   'missing-point': 'a point is missing; place it',
   'far-outside-picture': 'a point lies far outside the picture; place it again',
-  'frame-outside-clip': 'an event lies outside the clip; set it again',
+  'frame-outside-clip': 'a frame lies outside the clip; set it again',
   'frame-not-whole': 'an event lies between two frames; set it again',
   'bad-capture-rate': 'the capture rate factor cannot be used; check the set-up',
   'bad-tolerance': 'the tolerance of vertical must lie between 0° and 90°',
