@@ -1,11 +1,11 @@
 import type { BreathComparison, Comparison } from '@stillstroke/contract/comparison';
 import { measureSchema, type Measure } from '@stillstroke/contract/measures';
 import type { ArmComparison } from '@stillstroke/geometry/statistics/compare-arms';
-import { compareTogether, type ComparedTogether } from '@stillstroke/geometry/statistics/compare-measures';
 import { compareWithin, type Stratum } from '@stillstroke/geometry/statistics/compare-within';
 import { markingPart, type KeptFigure } from '../measures/kept-figures';
 import { unitOf } from '../measures/units';
-import { commonPart, compareSides, groupOf, testedTogether, testOf } from './compare-figures';
+import { commonPart, compareSides, groupOf, testOf } from './compare-figures';
+import { judgedTogether, type Judged } from './judged-together';
 
 type Group = BreathComparison['breathing'];
 type Arm = 'left' | 'right';
@@ -31,17 +31,16 @@ function judged(figures: readonly KeptFigure[], arms: readonly Arm[]): BreathCom
   const kinds = Object.fromEntries(
     measureSchema.options.map((measure) => [measure, arms.map((arm) => kindsOf(figures, measure, arm))]),
   ) as Record<Measure, Kinds[]>;
-  const compared = compareTogether(
+  const compared = judgedTogether(
     Object.fromEntries(
       measureSchema.options.map((measure) => [measure, compareKinds(kinds[measure])]),
     ) as Record<Measure, ArmComparison>,
   );
-  const together = testedTogether(Object.values(compared));
   return measureSchema.options.map((measure) => ({
     measure,
     unit: unitOf[measure],
     ...groupsOf(kinds[measure]),
-    ...answerOf(compared[measure], together),
+    ...answerOf(compared[measure]),
   }));
 }
 
@@ -105,13 +104,13 @@ const verdicts = {
   'too-few': 'too-few',
 } as const;
 
-function answerOf(compared: ComparedTogether, together: number) {
+function answerOf({ compared, measuresTogether }: Judged) {
   const { difference, interval, verdict, moreStrokes } = compared;
   return {
     difference,
     interval,
     verdict: verdicts[verdict],
     moreStrokes: moreStrokes === 0 ? null : moreStrokes,
-    test: testOf(compared, together),
+    test: testOf(compared, measuresTogether),
   };
 }

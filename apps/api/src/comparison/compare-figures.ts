@@ -1,11 +1,12 @@
 import type { DifferenceTest, MeasureComparison, Sample } from '@stillstroke/contract/comparison';
 import { measureSchema, type Measure } from '@stillstroke/contract/measures';
 import { compareArms, type ArmComparison } from '@stillstroke/geometry/statistics/compare-arms';
-import { compareTogether, type ComparedTogether } from '@stillstroke/geometry/statistics/compare-measures';
+import type { ComparedTogether } from '@stillstroke/geometry/statistics/compare-measures';
 import { t95, Z95 } from '@stillstroke/geometry/statistics/distributions';
 import { sessionMean } from '@stillstroke/geometry/trend/session-mean';
 import { markingPart, sharedPart, type KeptFigure } from '../measures/kept-figures';
 import { unitOf } from '../measures/units';
+import { judgedTogether } from './judged-together';
 
 type Summary = MeasureComparison['left'];
 
@@ -25,14 +26,11 @@ export function compareFigures(figures: readonly KeptFigure[]): MeasureCompariso
   const alone = Object.fromEntries(
     measureSchema.options.map((measure) => [measure, compareSides(sides[measure])]),
   ) as Record<Measure, ArmComparison>;
-  const { strokeLength: _, strokeIndex: __, ...others } = alone;
-  // Length and index follow from the rate and the clip's speed: whether a distance is known must not move other verdicts.
-  const { strokeLength, strokeIndex } = compareTogether(alone);
-  const compared = { ...compareTogether(others), strokeLength, strokeIndex };
-  const together = testedTogether(Object.values(compareTogether(others)));
+  const judged = judgedTogether(alone);
   return measureSchema.options.map((measure) => {
-    const { difference, interval, verdict, moreStrokes } = compared[measure];
-    const test = testOf(compared[measure], together);
+    const { compared, measuresTogether } = judged[measure];
+    const { difference, interval, verdict, moreStrokes } = compared;
+    const test = testOf(compared, measuresTogether);
     return {
       measure,
       unit: unitOf[measure],
@@ -94,11 +92,6 @@ export function groupOf(figures: readonly KeptFigure[]): Omit<Summary, 'samples'
 }
 
 type Tested = Pick<ComparedTogether, 'welch' | 'marking' | 'p' | 'pTogether'>;
-
-/** How many comparisons had strokes enough to be judged. */
-export function testedTogether(compared: readonly Pick<ComparedTogether, 'pTogether'>[]): number {
-  return compared.filter(({ pTogether }) => pTogether !== null).length;
-}
 
 /** What stands behind a verdict; null below three strokes a side. */
 export function testOf(

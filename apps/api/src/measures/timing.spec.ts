@@ -82,10 +82,16 @@ describe('stroke timing', () => {
   });
 
   it('whether a distance is known moves no verdict of another measure', async () => {
-    for (const at of [0, 70, 140]) await enter('right', at);
-    for (const at of [35, 104, 175]) await enter('left', at, { nextEntry: at + 69 });
-    const others = async () =>
-      (await compare()).splits.all.filter(({ measure }) => !/Length|Index/.test(measure));
+    for (const [n, at] of [0, 70, 140, 210, 280, 350].entries())
+      await enter('right', at, { breath: n % 2 === 0 });
+    for (const [n, at] of [35, 105, 175, 245, 315, 385].entries()) {
+      await enter('left', at, { nextEntry: at + (n % 2 === 0 ? 69 : 67), breath: n % 2 === 0 });
+    }
+    const isOther = ({ measure }: { measure: string }) => !/Length|Index/.test(measure);
+    const others = async () => {
+      const { splits, breath } = await compare();
+      return [splits.all.filter(isOther), breath.left.filter(isOther), breath.together.filter(isOther)];
+    };
     const before = await others();
     const distance = { metres: 10, uncertaintyM: 0.05, fromFrame: 10, toFrame: 350 };
     await coach.mutate('put', `/api/clips/${clipId}/distance`).send({ distance });
