@@ -97,7 +97,7 @@ describe('stroke timing', () => {
     await coach.mutate('put', `/api/clips/${clipId}/distance`).send({ distance });
     expect(await others()).toEqual(before);
     expect((await compare()).splits.all.find(({ measure }) => measure === 'strokeLength')?.left.count).toBe(
-      3,
+      6,
     );
   });
 
