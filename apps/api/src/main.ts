@@ -20,7 +20,11 @@ try {
   if (command === 'new-club') startNewClub(options, words);
   else if (command !== undefined)
     throw new StartProblem(`There is no command ${command}; npm start takes new-club or nothing.`);
-  else stopOnSignal(await start(options));
+  else {
+    const { greeting, stop } = await start(options);
+    stopOnSignal(stop);
+    greeting.forEach(options.print);
+  }
 } catch (error) {
   process.exitCode = 1;
   console.error(sentenceFor(error));

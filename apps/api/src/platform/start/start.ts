@@ -25,13 +25,19 @@ export interface StartOptions {
 /** How long open requests may take to finish when the server is told to stop. */
 const stopBoundMs = 8000;
 
+export interface Started {
+  /** Where it is and who can sign in, to be printed once a signal would be answered: whoever reads it may send one at once. */
+  readonly greeting: readonly string[];
+  /** Finishes what is running, then closes everything. */
+  readonly stop: () => Promise<void>;
+}
+
 /**
- * Starts the server: settings, port, data folder, database, demo, listening; then prints where it is.
+ * Starts the server: settings, port, data folder, database, demo, listening.
  *
- * @returns stops it: what is running is finished, then everything is closed
  * @throws StartProblem or BadSettingError with a sentence for whoever started it
  */
-export async function start(options: StartOptions): Promise<() => Promise<void>> {
+export async function start(options: StartOptions): Promise<Started> {
   const settings = readSettings(options.environment);
   await checkPort(settings);
   const { context, close } = openContext(settings, options.migrationsFolder);
@@ -44,12 +50,12 @@ export async function start(options: StartOptions): Promise<() => Promise<void>>
     const { server, url } = await listen(app, settings);
     const stopPurging = startPurging(context);
     const stopSending = startSending(context);
-    for (const line of greeting(context, url)) options.print(line);
-    return async () => {
+    const stop = async () => {
       stopPurging();
       await Promise.all([stopListening(server, stopBoundMs), stopSending(stopBoundMs)]);
       close();
     };
+    return { greeting: greeting(context, url), stop };
   } catch (error) {
     close();
     throw error;
