@@ -1,4 +1,12 @@
-import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import {
+  afterRenderEffect,
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  ElementRef,
+  inject,
+  input,
+} from '@angular/core';
 import { RouterLink } from '@angular/router';
 import type { Target } from '@stillstroke/contract/targets';
 import type { Trend, TrendPoint } from '@stillstroke/contract/trend';
@@ -22,6 +30,8 @@ const normal95 = 1.96;
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class TrendChart {
+  private readonly host = inject<ElementRef<HTMLElement>>(ElementRef).nativeElement;
+
   readonly trend = input.required<Trend>();
 
   /** The coach's bands for this athlete; those of this measure are drawn behind the points. */
@@ -110,6 +120,16 @@ export class TrendChart {
         `${sayDay(point.date)}, ${point.arm === 'both' ? 'both arms' : `${point.arm} arm`}: ${formatFigure(point.mean, unit, point.uncertainty)} ` +
         `${formatUncertainty(point.uncertainty, unit)} over ${point.count} ${point.arm === 'both' ? 'passages' : 'strokes'}`,
     };
+  }
+
+  constructor() {
+    // On a narrow screen the chart is wider than its place; the newest sessions are what people come for.
+    afterRenderEffect({
+      write: () => {
+        this.trend();
+        this.host.scrollLeft = this.host.scrollWidth;
+      },
+    });
   }
 }
 
